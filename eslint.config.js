@@ -1,25 +1,33 @@
 import js from '@eslint/js';
 import prettier from 'eslint-config-prettier';
-import boundaries from 'eslint-plugin-boundaries';
 import svelte from 'eslint-plugin-svelte';
 import globals from 'globals';
 import ts from 'typescript-eslint';
 import svelteConfig from './svelte.config.js';
+import { IMPORT_RULES, LAYERS } from './tests/support/importRules.js';
 
-/** Who may import whom; tests/unit/house/imports.test.ts holds the same map for type-only imports. */
-const elements = [
-	{ type: 'kinematics', pattern: 'src/lib/kinematics/**' },
-	{ type: 'domain', pattern: 'src/lib/domain/**' },
-	{ type: 'schemas', pattern: 'src/lib/schemas/**' },
-	{ type: 'charts', pattern: 'src/lib/charts/**' },
-	{ type: 'drawing', pattern: 'src/lib/drawing/**' },
-	{ type: 'components', pattern: 'src/lib/components/**' },
-	{ type: 'state', pattern: 'src/lib/state/**' },
-	{ type: 'client', pattern: 'src/lib/client/**' },
-	{ type: 'server', pattern: 'src/lib/server/**' },
-	{ type: 'text', pattern: 'src/lib/*.ts', mode: 'full' },
-	{ type: 'routes', pattern: 'src/routes/**' }
-];
+/** tests/unit/house/imports.test.ts reads the same map and catches what a pattern on the import's text cannot. */
+const importRules = Object.entries(IMPORT_RULES).map(([layer, rule]) => {
+	const refused = [...LAYERS, 'text'].filter((other) => other !== layer && !rule.layers.includes(other));
+	const patterns = [
+		{
+			regex: `^(\\$lib|(\\.\\./)+)/?(${refused.join('|')})(/|$)`,
+			message: `${layer} may import ${rule.layers.join(', ') || 'itself only'}.`
+		}
+	];
+	if (rule.packages)
+		patterns.push({
+			regex: `^(?!\\.|\\$lib|(${rule.packages.map(escape).join('|')})(/|$))`,
+			message: `${layer} may use these packages: ${rule.packages.join(', ')}.`
+		});
+	const files = layer === 'text' ? ['src/lib/*.ts'] : [`${rule.folder}/**`];
+	return { files, rules: { 'no-restricted-imports': ['error', { patterns }] } };
+});
+
+/** @param {string} name */
+function escape(name) {
+	return name.replace(/[.*+?^${}()|[\]\\]/g, '\\$&');
+}
 
 export default ts.config(
 	js.configs.recommended,
@@ -47,30 +55,7 @@ export default ts.config(
 		files: ['scripts/**', 'tests/**', '*.config.{js,ts}'],
 		rules: { 'no-console': 'off' }
 	},
-	{
-		files: ['src/lib/**/*.ts', 'src/lib/**/*.svelte', 'src/routes/**/*.ts', 'src/routes/**/*.svelte'],
-		plugins: { boundaries },
-		settings: { 'boundaries/elements': elements, 'import/resolver': { node: { extensions: ['.ts', '.js', '.svelte'] } } },
-		rules: {}
-	},
-	{
-		files: ['src/lib/kinematics/**'],
-		rules: {
-			'no-restricted-imports': [
-				'error',
-				{ patterns: [{ regex: '^(?!\\./|gl-matrix$)', message: 'The kernel imports gl-matrix and its own folder only.' }] }
-			]
-		}
-	},
-	{
-		files: ['src/lib/components/**', 'src/lib/state/**', 'src/lib/charts/**', 'src/lib/drawing/**', 'src/lib/domain/**', 'src/lib/schemas/**', 'src/lib/client/**'],
-		rules: {
-			'no-restricted-imports': [
-				'error',
-				{ patterns: [{ regex: '(^|/)server(/|$)|^sequelize$|^\\$env/', message: 'Server modules stay behind load functions and endpoints.' }] }
-			]
-		}
-	},
+	...importRules,
 	{
 		files: ['src/routes/**'],
 		rules: {
@@ -80,5 +65,17 @@ export default ts.config(
 			]
 		}
 	},
-	{ ignores: ['build/', '.svelte-kit/', '.data/', '.test/', '.screens/', 'node_modules/', 'test-results/', 'coverage/'] }
+	{
+		ignores: [
+			'build/',
+			'.svelte-kit/',
+			'.svelte-kit-*/',
+			'.data/',
+			'.test/',
+			'.screens/',
+			'node_modules/',
+			'test-results/',
+			'coverage/'
+		]
+	}
 );

@@ -41,7 +41,22 @@ export default {
 			'series-5': token('series-5'),
 			'series-6': token('series-6')
 		},
-		spacing: { 0: '0', px: '1px', 1: '4px', 2: '8px', 3: '12px', 4: '16px', 6: '24px', 7: '28px', 8: '32px', 11: '44px', 12: '48px', 14: '56px', rail: '176px', table: '400px' },
+		spacing: {
+			0: '0',
+			px: '1px',
+			1: '4px',
+			2: '8px',
+			3: '12px',
+			4: '16px',
+			6: '24px',
+			7: '28px',
+			8: '32px',
+			11: '44px',
+			12: '48px',
+			14: '56px',
+			rail: '176px',
+			table: '400px'
+		},
 		fontFamily: { mono: ['"JetBrains Mono"', 'ui-monospace', 'monospace'] },
 		fontSize: {
 			tick: ['11px', '16px'],
