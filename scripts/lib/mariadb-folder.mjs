@@ -12,7 +12,7 @@ import {
 } from 'node:fs';
 import { userInfo } from 'node:os';
 import path from 'node:path';
-import { HouseError, diskFull, say } from './house.mjs';
+import { HouseError, diskFull, lastLines, saysDiskFull, say } from './house.mjs';
 import { findProgram, run } from './processes.mjs';
 
 const roomNeeded = 300 * 1024 * 1024; // bytes: a fresh server takes about half of it
@@ -122,7 +122,7 @@ async function initialise(dir, series) {
 	);
 	if (code !== 0) {
 		rmSync(making, { recursive: true, force: true });
-		throw new HouseError(describeFailure(output, `mariadb-install-db failed:\n${lastLines(output, 12)}`));
+		throw new HouseError(describeFailure(output, `mariadb-install-db failed:\n${lastLines(output)}`));
 	}
 	const secret = () => randomBytes(24).toString('hex');
 	writeFileSync(
@@ -138,13 +138,10 @@ export function asRoot() {
 	return process.getuid() === 0 ? ['--user=root'] : [];
 }
 
-/** The last lines of a program's output. */
-export function lastLines(text, count) {
-	return text.trimEnd().split('\n').slice(-count).join('\n');
-}
-
 /** A known cause found in a server's output, in words; otherwise the given text. */
 export function describeFailure(output, otherwise) {
-	if (/No space left on device|Errcode: 28|error: 28\b|Disk full/i.test(output)) return diskFull();
+	if (saysDiskFull(output)) return diskFull();
+	if (/Unable to lock \.\/ibdata1|Can't lock aria control file/.test(output))
+		return 'Another database server uses this data folder (perhaps one in a container). Stop it, then try again.';
 	return otherwise;
 }

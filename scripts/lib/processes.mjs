@@ -1,9 +1,14 @@
 import { spawn } from 'node:child_process';
 import { accessSync, constants, readFileSync, readdirSync } from 'node:fs';
 import path from 'node:path';
+import { HouseError } from './house.mjs';
 
 // A normal user's PATH on Debian leaves out the folders of system programs.
 const systemFolders = ['/usr/local/sbin', '/usr/sbin', '/sbin', '/usr/bin', '/bin'];
+
+/** Children that still run, oldest first. */
+const children = [];
+let stopping = false;
 
 /** Full path of a program, or null when it is not installed. */
 export function findProgram(name) {
@@ -21,19 +26,29 @@ export function findProgram(name) {
 }
 
 /**
- * Starts a child that ends with us: own session, so Ctrl-C reaches only us and we stop things in order; and a
- * SIGTERM from the kernel if we are killed outright, so nothing is left running.
+ * Starts a child that ends with us. It has a session of its own, so Ctrl-C reaches us alone and things are stopped in
+ * order; and the kernel sends it SIGTERM should we be killed outright, so nothing is left running.
  */
 export function spawnTied(program, args, options = {}) {
+	if (stopping) throw new HouseError('Stopping.');
 	const setpriv = findProgram('setpriv');
 	const [command, rest] = setpriv ? [setpriv, ['--pdeathsig', 'TERM', '--', program, ...args]] : [program, args];
-	return spawn(command, rest, { detached: true, ...options });
+	const child = spawn(command, rest, { detached: true, ...options });
+	children.push(child);
+	child.once('exit', () => forget(child));
+	child.once('error', () => forget(child));
+	return child;
+}
+
+function forget(child) {
+	const index = children.indexOf(child);
+	if (index >= 0) children.splice(index, 1);
 }
 
 /** Runs a program to its end: `{ code, output }`, both streams together. A signal counts as code 1. */
-export function run(program, args, { tee = false, tied = spawnTied, ...options } = {}) {
+export function run(program, args, { tee = false, ...options } = {}) {
 	return new Promise((resolve, reject) => {
-		const child = tied(program, args, { stdio: ['ignore', 'pipe', 'pipe'], ...options });
+		const child = spawnTied(program, args, { stdio: ['ignore', 'pipe', 'pipe'], ...options });
 		let output = '';
 		const keep = (chunk) => {
 			output += chunk;
@@ -41,27 +56,25 @@ export function run(program, args, { tee = false, tied = spawnTied, ...options }
 		};
 		child.stdout.on('data', keep);
 		child.stderr.on('data', keep);
-		child.on('error', reject);
-		child.on('close', (code) => resolve({ code: code ?? 1, output }));
+		child.once('error', reject);
+		child.once('close', (code) => resolve({ code: code ?? 1, output }));
 	});
 }
 
-/** The command line of a process as a list, or null when it is gone (or belongs to no program). */
+/** Resolves with the exit code of a child (1 for a signal), also when it has ended already. */
+export function ended(child) {
+	if (child.exitCode !== null || child.signalCode !== null) return Promise.resolve(child.exitCode ?? 1);
+	return new Promise((resolve) => {
+		child.once('exit', (code) => resolve(code ?? 1));
+		child.once('error', () => resolve(1));
+	});
+}
+
+/** The command line of a process as a list, or null when it is gone. */
 export function commandLine(pid) {
 	try {
 		const words = readFileSync(`/proc/${pid}/cmdline`, 'utf8').split('\0').slice(0, -1);
 		return words.length > 0 ? words : null;
-	} catch {
-		return null;
-	}
-}
-
-/** When a process was started, in clock ticks since boot: with the pid it names a process for good. */
-export function startTicks(pid) {
-	try {
-		const stat = readFileSync(`/proc/${pid}/stat`, 'utf8');
-		const fields = stat.slice(stat.lastIndexOf(')') + 2).split(' ');
-		return fields[0] === 'Z' ? null : fields[19];
 	} catch {
 		return null;
 	}
@@ -78,21 +91,54 @@ export function findProcesses(matches) {
 		});
 }
 
+/** When a process was started, in clock ticks since boot; with the pid it names a process for good. Null when gone. */
+export function startTicks(pid) {
+	try {
+		const stat = readFileSync(`/proc/${pid}/stat`, 'utf8');
+		const fields = stat.slice(stat.lastIndexOf(')') + 2).split(' ');
+		return fields[0] === 'Z' ? null : fields[19];
+	} catch {
+		return null;
+	}
+}
+
 /** Waits. */
 export const pause = (ms) => new Promise((resolve) => setTimeout(resolve, ms));
 
-/** Asks a process to end, waits, and ends it by force past the deadline. */
-export async function stopProcess(pid, { signal = 'SIGTERM', deadline = 20_000 } = {}) {
+/** Asks a process (or, with `group`, it and its own children) to end; past the deadline, by force. */
+export async function stopProcess(pid, { signal = 'SIGTERM', deadline = 20_000, group = false } = {}) {
 	const born = startTicks(pid);
 	if (born === null) return;
 	const alive = () => startTicks(pid) === born;
-	try {
-		process.kill(pid, signal);
-		const end = Date.now() + deadline;
-		while (alive() && Date.now() < end) await pause(20);
-		if (alive()) process.kill(pid, 'SIGKILL');
-		while (alive()) await pause(20);
-	} catch (error) {
-		if (error.code !== 'ESRCH') throw error;
+	const send = (what) => {
+		try {
+			process.kill(group ? -pid : pid, what);
+		} catch (error) {
+			if (error.code !== 'ESRCH') throw error;
+		}
+	};
+	send(signal);
+	const end = Date.now() + deadline;
+	while (alive() && Date.now() < end) await pause(20);
+	// With a group also once the leader is gone: what it started goes too.
+	if (alive() || group) send('SIGKILL');
+	while (alive()) await pause(20);
+}
+
+/** Stops every child, youngest first, and lets none be started afterwards. */
+export async function stopChildren() {
+	stopping = true;
+	for (const child of [...children].reverse()) if (child.pid) await stopProcess(child.pid, { group: true });
+}
+
+/** The impatient second Ctrl-C: everything goes at once. The database recovers at its next start. */
+export function killChildren() {
+	stopping = true;
+	for (const child of children) {
+		try {
+			if (child.pid) process.kill(-child.pid, 'SIGKILL');
+		} catch {
+			// It has just gone by itself.
+		}
 	}
 }
