@@ -213,7 +213,7 @@ export function linkRows(link: Linkage, pose: Pose, index = 0, count = 1): Row[]
 /** Gaussian elimination with row exchange; null where a pivot vanishes. Also gives the sign of the determinant. */
 export function eliminate(rows: Row[]): { step: Float64Array; sign: number } | null {
 	const n = rows.length;
-	const a = rows.map((row) => Float64Array.from([...row.gradient, -row.residual]));
+	const a: Float64Array[] = rows.map((row) => Float64Array.from([...row.gradient, -row.residual]));
 	let sign = 1;
 	for (let c = 0; c < n; c++) {
 		let best = c;
