@@ -21,8 +21,8 @@ export function webEnvironment({ port, host = '127.0.0.1', origin, databaseUrl, 
 	return env;
 }
 
-/** Serves a finished build; resolves with the child once it listens. */
-export async function serveBuild({ folder = 'build', env }) {
+/** Serves a finished build, its log going to `logTo`; resolves with the child once it listens. */
+export async function serveBuild({ folder = 'build', env, logTo = process.stdout }) {
 	const child = spawnTied(process.execPath, [path.join(root, folder, 'index.js')], {
 		cwd: root,
 		env: { ...env, NODE_ENV: 'production' },
@@ -30,13 +30,13 @@ export async function serveBuild({ folder = 'build', env }) {
 	});
 	let early = '';
 	let listening = false;
-	const pass = (stream) => (chunk) => {
-		if (listening) return void stream.write(chunk);
+	const pass = (chunk) => {
+		if (listening) return void logTo.write(chunk);
 		early += chunk;
 		if (/^Listening on /m.test(early)) listening = true;
 	};
-	child.stdout.on('data', pass(process.stdout));
-	child.stderr.on('data', pass(process.stderr));
+	child.stdout.on('data', pass);
+	child.stderr.on('data', pass);
 	await untilListening(
 		child,
 		() => listening,
