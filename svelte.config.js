@@ -12,6 +12,8 @@ export default {
 	kit: {
 		adapter: adapter({ out: buildFolder }),
 		outDir: kitFolder,
+		// The package's barrel of adapters imports every validation library there is.
+		alias: { 'superforms-zod4': 'node_modules/sveltekit-superforms/dist/adapters/zod4.js' },
 		csp: {
 			mode: 'auto',
 			directives: {

@@ -19,6 +19,14 @@ export interface ShopMembership {
 export const ROLES = ['owner', 'builder', 'technician', 'client'] as const;
 export type Role = (typeof ROLES)[number];
 
+/** A published sign-in of the demo, shown only where it works. */
+export interface DemoAccount {
+	role: Role;
+	name: string;
+	email: string;
+	password: string;
+}
+
 export const PASSWORD_MIN = 12;
 export const PASSWORD_MAX = 200;
 

@@ -1,5 +1,5 @@
 import { DataTypes, Model } from 'sequelize';
-import type { InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
+import type { InferAttributes, InferCreationAttributes, NonAttribute, Sequelize } from 'sequelize';
 import { id } from './columns';
 
 export class Person extends Model<InferAttributes<Person>, InferCreationAttributes<Person>> {
@@ -19,18 +19,13 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
 	declare personId: string;
 	declare createdAt: Date;
 	declare expiresAt: Date;
+	declare person?: NonAttribute<Person>;
 }
 
 export class KnownDevice extends Model<InferAttributes<KnownDevice>, InferCreationAttributes<KnownDevice>> {
 	declare tokenHash: string;
 	declare personId: string;
 	declare createdAt: Date;
-}
-
-export class Attempt extends Model<InferAttributes<Attempt>, InferCreationAttributes<Attempt>> {
-	declare id: string;
-	declare points: number;
-	declare expiresAt: Date;
 }
 
 export function definePeople(sequelize: Sequelize): void {
@@ -62,13 +57,5 @@ export function definePeople(sequelize: Sequelize): void {
 			createdAt: { type: DataTypes.DATE(3), allowNull: false }
 		},
 		{ sequelize, tableName: 'known_devices' }
-	);
-	Attempt.init(
-		{
-			id: { type: DataTypes.STRING(120), primaryKey: true },
-			points: { type: DataTypes.INTEGER, allowNull: false },
-			expiresAt: { type: DataTypes.DATE(3), allowNull: false }
-		},
-		{ sequelize, tableName: 'attempts' }
 	);
 }
