@@ -41,7 +41,10 @@ const email = z
 /** Sign-in form. `next` is the local path to go on to; anything else is ignored by the server. */
 export const signInSchema = z.object({
 	email,
-	password: z.string().min(1, 'Enter your password.').max(PASSWORD_MAX, `A password has at most ${PASSWORD_MAX} characters.`),
+	password: z
+		.string()
+		.min(1, 'Enter your password.')
+		.max(PASSWORD_MAX, `A password has at most ${PASSWORD_MAX} characters.`),
 	next: z.string().max(500).default('')
 });
 
@@ -53,7 +56,11 @@ export const signUpSchema = z.object({
 		.string()
 		.min(PASSWORD_MIN, `Use at least ${PASSWORD_MIN} characters; a few words in a row do well.`)
 		.max(PASSWORD_MAX, `A password has at most ${PASSWORD_MAX} characters.`),
-	shop: z.string().trim().min(2, 'Enter the name of your shop, 2 to 80 characters.').max(80, 'A shop name has at most 80 characters.')
+	shop: z
+		.string()
+		.trim()
+		.min(2, 'Enter the name of your shop, 2 to 80 characters.')
+		.max(80, 'A shop name has at most 80 characters.')
 });
 
 export type SignInForm = z.infer<typeof signInSchema>;

@@ -1,5 +1,8 @@
 import { z } from 'zod';
 
+/** Version of the document this application writes. */
+export const AXLE_SCHEMA = 1;
+
 /** The eight hardpoints of a corner, in the order in which a table shows them. */
 export const AXLE_POINTS = [
 	'upperFront',
@@ -12,11 +15,13 @@ export const AXLE_POINTS = [
 	'tieRodOuter'
 ] as const;
 
-const FAR = 10_000;
+/** Farthest a coordinate may lie from the origin, mm. */
+export const FAR_MM = 10_000;
 
 /** A number within limits; the message names what is meant and what is accepted. */
 function within(label: string, low: number, high: number, unit: string) {
-	const message = `${label}: a number from ${low} to ${high}${unit ? ` ${unit}` : ''}.`;
+	const [from, to] = [low, high].map((end) => String(end).replace('-', '−'));
+	const message = `${label}: a number from ${from} to ${to}${unit ? ` ${unit}` : ''}.`;
 	return z.number({ error: message }).min(low, message).max(high, message);
 }
 
@@ -26,24 +31,24 @@ function entry(label: string, low: number, high: number, unit: string) {
 }
 
 function pointEntry(name: string) {
-	const axis = (word: string) => entry(`${name}, ${word}`, -FAR, FAR, 'mm');
+	const axis = (word: string) => entry(`${name}, ${word}`, -FAR_MM, FAR_MM, 'mm');
 	return z.tuple([axis('fore'), axis('out'), axis('up')], { error: `${name}: three coordinates in mm.` });
 }
 
 const points = z.strictObject({
-	upperFront: pointEntry('upperFront'),
-	upperRear: pointEntry('upperRear'),
-	upperBall: pointEntry('upperBall'),
-	lowerFront: pointEntry('lowerFront'),
-	lowerRear: pointEntry('lowerRear'),
-	lowerBall: pointEntry('lowerBall'),
-	tieRodInner: pointEntry('tieRodInner'),
-	tieRodOuter: pointEntry('tieRodOuter')
+	upperFront: pointEntry('Upper arm, front pivot'),
+	upperRear: pointEntry('Upper arm, rear pivot'),
+	upperBall: pointEntry('Upper ball joint'),
+	lowerFront: pointEntry('Lower arm, front pivot'),
+	lowerRear: pointEntry('Lower arm, rear pivot'),
+	lowerBall: pointEntry('Lower ball joint'),
+	tieRodInner: pointEntry('Inner tie-rod joint'),
+	tieRodOuter: pointEntry('Outer tie-rod joint')
 });
 
 const wheel = z.strictObject({
 	track: entry('Track', 300, 4000, 'mm'),
-	x: within('Wheel, fore', -FAR, FAR, 'mm'),
+	x: within('Wheel, fore', -FAR_MM, FAR_MM, 'mm'),
 	loadedRadius: entry('Loaded radius', 50, 1000, 'mm'),
 	camber: within('Static camber', -20, 20, '°'),
 	toe: within('Static toe', -20, 20, '°')
@@ -70,13 +75,21 @@ export const vehicleSchema = z.strictObject({
 	tyreRate: entry('Tyre rate', 1, 10_000, 'N/mm')
 });
 
-const thread = z.string().min(1).max(20, 'Thread: such as 5/8-18 or M16x1.5.');
+const thread = z
+	.string({ error: 'Thread: such as 5/8-18 or M16x1.5.' })
+	.regex(/^[0-9A-Za-z./-]{1,20}$/, 'Thread: such as 5/8-18 or M16x1.5.');
 
 /** Shims under the upper pivots. `side`: which way one more shim moves the pivot shaft. Packs are those the geometry was entered with, mm. */
 const shimAdjuster = z.strictObject({
 	kind: z.literal('shim'),
 	side: z.enum(['outboard', 'inboard'], { error: 'A shim moves the pivot: outboard or inboard.' }),
-	direction: z.tuple([within('Shim direction', -1, 1, ''), within('Shim direction', -1, 1, ''), within('Shim direction', -1, 1, '')]),
+	direction: z
+		.tuple([
+			within('Shim direction', -1, 1, ''),
+			within('Shim direction', -1, 1, ''),
+			within('Shim direction', -1, 1, '')
+		])
+		.refine((direction) => Math.hypot(...direction) > 0.1, 'Shim direction: fore, out and up, not all of them near 0.'),
 	frontNow: within('Front pack now', 0, 100, 'mm'),
 	rearNow: within('Rear pack now', 0, 100, 'mm'),
 	boltReserve: entry('Thread left past the nut', 0, 200, 'mm'),
@@ -142,18 +155,40 @@ const travelTarget = z.strictObject({
 export const targetSchema = z
 	.discriminatedUnion('at', [rideTarget, travelTarget])
 	.refine((target) => target.low !== null || target.high !== null, 'Target: a lower or an upper bound, or both.')
-	.refine((target) => target.low === null || target.high === null || target.low <= target.high, 'Target: the lower bound first.')
+	.refine(
+		(target) => target.low === null || target.high === null || target.low <= target.high,
+		'Target: the lower bound first.'
+	)
 	.refine((target) => target.at === 'ride' || target.from < target.to, 'Target: travel from droop to bump.');
 
 const wished = (label: string) =>
-	z.strictObject({ value: within(label, -30, 30, '°'), tolerance: within(`${label}, tolerance`, 0.001, 10, '°') }).nullable();
-const alignTarget = z.strictObject({ camber: wished('Camber'), caster: wished('Caster'), toe: wished('Toe per wheel') });
+	z
+		.strictObject({ value: within(label, -30, 30, '°'), tolerance: within(`${label}, tolerance`, 0.001, 10, '°') })
+		.nullable();
+const alignTarget = z.strictObject({
+	camber: wished('Camber'),
+	caster: wished('Caster'),
+	toe: wished('Toe per wheel')
+});
+
+const MIRROR_OR_OWN = 'Right side: "mirror" or a corner of its own.';
+
+/** The right side. A plain union would answer a wrong coordinate with "invalid input"; this names the coordinate. */
+const rightSchema = z.unknown().transform((value, context): 'mirror' | z.infer<typeof cornerSchema> => {
+	if (value === 'mirror') return value;
+	const isCorner = typeof value === 'object' && value !== null;
+	const read = isCorner ? cornerSchema.safeParse(value) : null;
+	if (read?.success) return read.data;
+	const issues = read?.error.issues ?? [{ path: [], message: MIRROR_OR_OWN }];
+	for (const { path, message } of issues) context.addIssue({ code: 'custom', path: [...path], message });
+	return z.NEVER;
+});
 
 /** One axle's geometry with what is wanted of it: the thing a draft holds and a revision keeps. mm, degrees, N/mm, kg. */
 export const axleSchema = z.strictObject({
-	schema: z.literal(1),
+	schema: z.literal(AXLE_SCHEMA),
 	left: cornerSchema,
-	right: z.union([z.literal('mirror'), cornerSchema]),
+	right: rightSchema,
 	vehicle: vehicleSchema,
 	adjusters: adjustersSchema,
 	targets: z.array(targetSchema).max(60, 'Targets: at most 60.'),

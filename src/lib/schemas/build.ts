@@ -79,7 +79,10 @@ export type BuildInput = z.infer<typeof buildInputSchema>;
 /** What the API takes to change a build: only the keys given change. Defaults are dropped, or a missing key would reset its field. */
 export const buildPatchSchema = z.object({
 	...(Object.fromEntries(
-		Object.entries(buildInputSchema.shape).map(([key, field]) => [key, (field instanceof z.ZodDefault ? field.unwrap() : field).optional()])
+		Object.entries(buildInputSchema.shape).map(([key, field]) => [
+			key,
+			(field instanceof z.ZodDefault ? field.unwrap() : field).optional()
+		])
 	) as { [K in keyof BuildInput]: z.ZodOptional<z.ZodType<BuildInput[K]>> }),
 	archived: z.boolean().optional(),
 	people: z.array(z.uuid()).max(100).optional()
@@ -205,4 +208,6 @@ export const keepSchema = z.object({
 export type KeepInput = z.infer<typeof keepSchema>;
 
 /** Body of `POST …/draft/start`. */
-export const startSchema = z.object({ letter: z.string().regex(/^[A-Z]{1,4}$/, 'letter: a revision letter such as C.') });
+export const startSchema = z.object({
+	letter: z.string().regex(/^[A-Z]{1,4}$/, 'letter: a revision letter such as C.')
+});

@@ -7,7 +7,11 @@ export const shimSchema = z.object({
 		.min(0.05, 'Thickness: 0.05 to 25 mm.')
 		.max(25, 'Thickness: 0.05 to 25 mm.'),
 	unit: z.enum(['mm', 'in'], { error: 'Unit: mm or in.' }),
-	count: z.number({ error: 'Count: a whole number.' }).int('Count: a whole number.').min(0, 'Count: 0 to 10,000.').max(10000, 'Count: 0 to 10,000.')
+	count: z
+		.number({ error: 'Count: a whole number.' })
+		.int('Count: a whole number.')
+		.min(0, 'Count: 0 to 10,000.')
+		.max(10000, 'Count: 0 to 10,000.')
 });
 export type Shim = z.infer<typeof shimSchema>;
 
@@ -17,7 +21,10 @@ export const shimStockSchema = z.object({
 	items: z
 		.array(shimSchema)
 		.max(200, 'At most 200 thicknesses.')
-		.refine((items) => new Set(items.map((item) => `${item.unit} ${item.thickness.toFixed(4)}`)).size === items.length, 'Each thickness once.')
+		.refine(
+			(items) => new Set(items.map((item) => `${item.unit} ${item.thickness.toFixed(4)}`)).size === items.length,
+			'Each thickness once.'
+		)
 });
 export type ShimStockInput = z.infer<typeof shimStockSchema>;
 
