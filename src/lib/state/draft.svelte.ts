@@ -223,6 +223,11 @@ export class DraftEditor {
 		return this.readOnly ? Promise.resolve(true) : this.#keeper.flush();
 	}
 
+	/** Reads the draft again: what others kept meanwhile is merged in. */
+	refresh(): Promise<void> {
+		return this.readOnly ? Promise.resolve() : this.#keeper.refresh();
+	}
+
 	/** Fresh page data: a newer draft on the server is merged in. */
 	receive(draft: DraftSnapshot): void {
 		if (!this.readOnly) this.#keeper.receive(draft);

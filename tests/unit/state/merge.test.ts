@@ -3,7 +3,11 @@ import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 
 describe('three-way merge', () => {
-	const base = { left: { points: { a: [0, 0, 0], b: [1, 1, 1] }, track: 1480 }, right: 'mirror' as unknown, list: [1, 2] };
+	const base = {
+		left: { points: { a: [0, 0, 0], b: [1, 1, 1] }, track: 1480 },
+		right: 'mirror' as unknown,
+		list: [1, 2]
+	};
 
 	test('a point is one thing: two coordinates changed by two people are a conflict', () => {
 		const mine = { ...base, left: { ...base.left, points: { ...base.left.points, a: [5, 0, 0] } } };
@@ -16,7 +20,11 @@ describe('three-way merge', () => {
 
 	test('the same change by both is no conflict and nothing to tell', () => {
 		const changed = { ...base, left: { ...base.left, track: 1500 } };
-		expect(mergeThreeWay(base, changed, structuredClone(changed))).toEqual({ merged: changed, conflicts: [], taken: [] });
+		expect(mergeThreeWay(base, changed, structuredClone(changed))).toEqual({
+			merged: changed,
+			conflicts: [],
+			taken: []
+		});
 	});
 
 	test('a change of kind is one thing: mirror made its own corner against an edit elsewhere', () => {

@@ -1,5 +1,6 @@
 import { clearAllUnsent, countUnsent, createUnsentStore, type UnsentDraft } from '$lib/client/unsent';
 import { emptyAxle } from '$lib/domain/axle';
+import 'fake-indexeddb/auto';
 import { IDBFactory } from 'fake-indexeddb';
 import { beforeEach, expect, test, vi } from 'vitest';
 

@@ -49,7 +49,9 @@ export class GridState {
 	readonly row = $derived.by(() => {
 		const { point } = this.#options.selection;
 		const aside = this.#aside !== null && this.#aside.beside === point ? this.#aside.key : null;
-		const found = this.rows.findIndex((row) => (aside === null ? row.point !== null && row.point === point : row.key === aside));
+		const found = this.rows.findIndex((row) =>
+			aside === null ? row.point !== null && row.point === point : row.key === aside
+		);
 		return Math.max(0, found);
 	});
 	readonly column = $derived.by(() => Math.min(this.#column, (this.rows[this.row]?.cells.length ?? 1) - 1));
@@ -106,7 +108,8 @@ export class GridState {
 	open(typed: string | null = null): void {
 		const { cell } = this;
 		if (!cell || this.#options.editor.readOnly) return;
-		const opened = this.faults.get(cell.key)?.text ?? entryText(cell, this.#document, this.#options.preferences.current);
+		const opened =
+			this.faults.get(cell.key)?.text ?? entryText(cell, this.#document, this.#options.preferences.current);
 		this.entry = { opened, text: typed ?? opened, caret: typed === null };
 	}
 
@@ -220,7 +223,10 @@ export class GridState {
 		);
 		const fitting = pairs.flatMap(({ cell, read }) => (cell && read?.ok ? [{ cell, value: read.value }] : []));
 		if (fitting.length < pairs.length) return onforeign(text);
-		editor.edit((document) => fitting.forEach(({ cell, value }) => cell.write(document, value)), `pasting ${fitting.length} cells`);
+		editor.edit(
+			(document) => fitting.forEach(({ cell, value }) => cell.write(document, value)),
+			`pasting ${fitting.length} cells`
+		);
 		fitting.forEach(({ cell }) => this.faults.delete(cell.key));
 		this.#anchor = { row: top, column: left };
 		this.go(top + block.length - 1, left + Math.max(...block.map((texts) => texts.length)) - 1, true);

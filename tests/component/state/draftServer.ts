@@ -48,11 +48,14 @@ export class DraftServer {
 		if (this.mode === 'expired') return this.#problem(401, 'Sign in.');
 		if (this.mode === 'fault') return this.#problem(500, 'Something went wrong.');
 		if (this.mode === 'refuse') {
-			return this.#problem(422, 'Not accepted.', { errors: [{ field: 'document.left', message: 'Track: 600 to 2600 mm.' }] });
+			return this.#problem(422, 'Not accepted.', {
+				errors: [{ field: 'document.left', message: 'Track: 600 to 2600 mm.' }]
+			});
 		}
 		if (!init?.method || init.method === 'GET') return Response.json(this.held);
 		if (ifMatch === null) return this.#problem(428, 'If-Match is missing.');
-		if (ifMatch !== `"${this.held.version}"`) return this.#problem(409, 'The draft has changed.', { current: this.held });
+		if (ifMatch !== `"${this.held.version}"`)
+			return this.#problem(409, 'The draft has changed.', { current: this.held });
 		return url.endsWith('/start') ? this.#start() : this.#put(body.document as AxleDocument);
 	};
 

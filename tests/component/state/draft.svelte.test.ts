@@ -1,9 +1,9 @@
-// @vitest-environment jsdom
 import { createUnsentStore } from '$lib/client/unsent';
 import { emptyAxle } from '$lib/domain/axle';
 import type { AxleDocument, PointEntry } from '$lib/schemas/axle';
 import type { PointName } from '$lib/kinematics';
 import { DraftEditor, type DraftOptions } from '$lib/state/draft.svelte';
+import 'fake-indexeddb/auto';
 import { IDBFactory } from 'fake-indexeddb';
 import { flushSync } from 'svelte';
 import { afterEach, beforeEach, describe, expect, test, vi } from 'vitest';
@@ -112,7 +112,8 @@ describe('undo and redo', () => {
 
 	test('a held key is one step; the same key after a pause is another', () => {
 		const editor = open();
-		for (let step = 1; step <= 5; step += 1) editor.edit(place('upperBall', [0, 620 + step, 520]), 'nudge', 'upperBall');
+		for (let step = 1; step <= 5; step += 1)
+			editor.edit(place('upperBall', [0, 620 + step, 520]), 'nudge', 'upperBall');
 		vi.advanceTimersByTime(2000);
 		editor.edit(place('upperBall', [0, 630, 520]), 'nudge', 'upperBall');
 		editor.undo();
@@ -419,6 +420,7 @@ describe('unsent edits on this device', () => {
 		first.edit(place('upperBall', [0, 621, 520]), 'one');
 		await settled();
 		// The page dies: no timer, no goodbye.
+		vi.clearAllTimers();
 		const second = connected();
 		await settled();
 		expect(second.document.left.points.upperBall).toEqual([0, 621, 520]);
