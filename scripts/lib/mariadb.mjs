@@ -29,6 +29,7 @@ export async function startMariadb({ dir, database = 'trammel', port, fast = fal
 	const log = openSync(logFile, 'w', 0o600);
 	const child = spawnTied(mariadbd, serverArguments({ folder, data, port: chosen, initFile, fast }), {
 		cwd: folder,
+		patience: 30_000,
 		stdio: ['ignore', log, log]
 	});
 	closeSync(log);

@@ -39,9 +39,10 @@ export async function ensurePrograms(programs) {
 		result.code !== 0 &&
 		/Unable to locate package|has no installation candidate|404 +Not Found/.test(result.output)
 	) {
-		// A fresh image has no package lists, an old one stale ones.
+		// A fresh image has no package lists, an old one stale ones. An update that reaches no server still ends with 0.
 		const update = await run(command[0], [...command.slice(1), 'update', '-o', 'DPkg::Lock::Timeout=60']);
-		result = update.code === 0 ? await run(command[0], [...command.slice(1), ...install]) : update;
+		const again = await run(command[0], [...command.slice(1), ...install]);
+		result = { code: again.code, output: update.output + again.output };
 	}
 	if (result.code !== 0) throw new HouseError(aptFailure(result.output, byHand));
 	const still = missing.filter((name) => !findProgram(name));
@@ -102,7 +103,9 @@ export async function ensurePackages() {
 	if (!npm) throw new HouseError('npm is not in PATH; it comes with Node. Check the Node installation.');
 	say('Installing packages (npm ci).');
 	const { code, output } = await run(npm, ['ci', '--include=dev', '--no-audit', '--no-fund', '--loglevel=error'], {
-		cwd: root
+		cwd: root,
+		// It undoes its work when asked to stop, which takes long and serves nothing: the next npm ci starts from nothing.
+		patience: 1_000
 	});
 	if (code !== 0) throw new HouseError(npmFailure(output));
 	return true;

@@ -6,7 +6,7 @@ import { HouseError } from './house.mjs';
 // A normal user's PATH on Debian leaves out the folders of system programs.
 const systemFolders = ['/usr/local/sbin', '/usr/sbin', '/sbin', '/usr/bin', '/bin'];
 
-/** Children that still run, oldest first. */
+/** Children that still run, oldest first, with the time each gets to end when asked. */
 const children = [];
 let stopping = false;
 
@@ -27,21 +27,22 @@ export function findProgram(name) {
 
 /**
  * Starts a child that ends with us. It has a session of its own, so Ctrl-C reaches us alone and things are stopped in
- * order; and the kernel sends it SIGTERM should we be killed outright, so nothing is left running.
+ * order; and the kernel sends it SIGTERM should we be killed outright, so nothing is left running. `patience` (ms) is
+ * how long it may take to end when asked, before it is ended by force.
  */
-export function spawnTied(program, args, options = {}) {
+export function spawnTied(program, args, { patience = 8_000, ...options } = {}) {
 	if (stopping) throw new HouseError('Stopping.');
 	const setpriv = findProgram('setpriv');
 	const [command, rest] = setpriv ? [setpriv, ['--pdeathsig', 'TERM', '--', program, ...args]] : [program, args];
 	const child = spawn(command, rest, { detached: true, ...options });
-	children.push(child);
+	children.push({ child, patience });
 	child.once('exit', () => forget(child));
 	child.once('error', () => forget(child));
 	return child;
 }
 
 function forget(child) {
-	const index = children.indexOf(child);
+	const index = children.findIndex((entry) => entry.child === child);
 	if (index >= 0) children.splice(index, 1);
 }
 
@@ -128,13 +129,15 @@ export async function stopProcess(pid, { signal = 'SIGTERM', deadline = 20_000, 
 /** Stops every child, youngest first, and lets none be started afterwards. */
 export async function stopChildren() {
 	stopping = true;
-	for (const child of [...children].reverse()) if (child.pid) await stopProcess(child.pid, { group: true });
+	for (const { child, patience } of [...children].reverse()) {
+		if (child.pid) await stopProcess(child.pid, { group: true, deadline: patience });
+	}
 }
 
 /** The impatient second Ctrl-C: everything goes at once. The database recovers at its next start. */
 export function killChildren() {
 	stopping = true;
-	for (const child of children) {
+	for (const { child } of children) {
 		try {
 			if (child.pid) process.kill(-child.pid, 'SIGKILL');
 		} catch {
