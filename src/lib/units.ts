@@ -1,80 +1,83 @@
 import type { Preferences } from './schemas/preferences';
 
-/** What kind of number a figure is; decides its unit and decimals. Stored units stand beside each. */
-export type Quantity =
-	| 'length' // mm
-	| 'angle' // °
-	| 'anglePerLength' // °/mm
-	| 'lengthPerLength' // mm/mm
-	| 'ratio'
-	| 'percent' // 0…100
-	| 'rate' // N/mm
-	| 'force' // N
-	| 'mass' // kg
-	| 'frequency'; // Hz
-
-/** Exact by definition: international inch and pound, standard gravity (ISO 80000-3, -4). */
+/** Exact by definition (international inch and foot, 1959). */
 export const MM_PER_INCH = 25.4;
-export const INCHES_PER_FOOT = 12;
-export const KG_PER_POUND = 0.45359237;
-export const NEWTONS_PER_POUND = KG_PER_POUND * 9.80665;
+export const MM_PER_FOOT = 304.8;
+export const MM_PER_CM = 10;
+export const MM_PER_M = 1000;
+/** Exact: 0.45359237 kg (the pound) · 9.80665 m/s² (standard gravity). */
+export const KG_PER_LB = 0.45359237;
+export const STANDARD_GRAVITY = 9.80665;
+export const N_PER_LBF = KG_PER_LB * STANDARD_GRAVITY;
+/** A spring rate of 1 lb/in in N/mm. */
+export const N_PER_MM_PER_LB_PER_IN = N_PER_LBF / MM_PER_INCH;
+export const DEGREES_PER_RADIAN = 180 / Math.PI;
 export const MINUTES_PER_DEGREE = 60;
 
-/** A rate over travel is shown per this much travel: a figure per single millimetre is too small to read. */
-const TRAVEL_STEP_MM = 10;
+/** What a number is. Stored as degrees, mm, °/mm, mm/mm, –, %, N/mm, Hz, N, kg. */
+export const QUANTITIES = [
+	'angle',
+	'length',
+	'anglePerLength',
+	'lengthPerLength',
+	'ratio',
+	'percent',
+	'rate',
+	'frequency',
+	'force',
+	'mass'
+] as const;
+export type Quantity = (typeof QUANTITIES)[number];
 
-type UnitChoice = Pick<Preferences, 'length' | 'force'>;
+/** What of a person's preferences decides a unit. Masses go with forces: kg with N, lb with lbf. */
+export type UnitChoice = Pick<Preferences, 'length' | 'angle' | 'force'>;
 
-/** Stored value × this = shown value. */
-export function displayFactor(quantity: Quantity, { length, force }: UnitChoice): number {
+/**
+ * The shown number for one stored: angles stay degrees (degrees and minutes are a way of writing them); rates over travel are
+ * shown per 10 mm or per inch, in minutes where angles are.
+ */
+function factor(quantity: Quantity, { length, angle, force }: UnitChoice): number {
+	const inches = length === 'in';
 	switch (quantity) {
 		case 'length':
-			return length === 'mm' ? 1 : 1 / MM_PER_INCH;
+			return inches ? 1 / MM_PER_INCH : 1;
 		case 'anglePerLength':
-			return length === 'mm' ? TRAVEL_STEP_MM : MM_PER_INCH;
+			return (inches ? MM_PER_INCH : 10) * (angle === 'minutes' ? MINUTES_PER_DEGREE : 1);
+		case 'lengthPerLength':
+			return inches ? 1 : 10;
 		case 'rate':
-			return force === 'N' ? 1 : MM_PER_INCH / NEWTONS_PER_POUND;
+			return force === 'lbf' ? 1 / N_PER_MM_PER_LB_PER_IN : 1;
 		case 'force':
-			return force === 'N' ? 1 : 1 / NEWTONS_PER_POUND;
+			return force === 'lbf' ? 1 / N_PER_LBF : 1;
 		case 'mass':
-			return force === 'N' ? 1 : 1 / KG_PER_POUND;
+			return force === 'lbf' ? 1 / KG_PER_LB : 1;
 		default:
 			return 1;
 	}
 }
 
-/** A stored value in the person's unit, unrounded. */
-export function toDisplay(value: number, quantity: Quantity, choice: UnitChoice): number {
-	return value * displayFactor(quantity, choice);
+/** A stored value in the unit in which the person reads it. */
+export function toDisplay(stored: number, quantity: Quantity, units: UnitChoice): number {
+	if (quantity === 'length' && units.length === 'in') return stored / MM_PER_INCH;
+	return stored * factor(quantity, units);
 }
 
-/** A value in the person's unit as it is stored. */
-export function fromDisplay(value: number, quantity: Quantity, choice: UnitChoice): number {
-	return value / displayFactor(quantity, choice);
+/** A value in the person's unit as it is stored. Inverse of `toDisplay`. */
+export function fromDisplay(shown: number, quantity: Quantity, units: UnitChoice): number {
+	if (quantity === 'length' && units.length === 'in') return shown * MM_PER_INCH;
+	return shown / factor(quantity, units);
 }
 
-/** The unit as it stands beside a figure; empty for a bare ratio. */
-export function unitLabel(quantity: Quantity, { length, force }: UnitChoice): string {
-	switch (quantity) {
-		case 'length':
-			return length;
-		case 'angle':
-			return '°';
-		case 'anglePerLength':
-			return length === 'mm' ? '°/10 mm' : '°/in';
-		case 'lengthPerLength':
-			return length === 'mm' ? 'mm/mm' : 'in/in';
-		case 'percent':
-			return '%';
-		case 'rate':
-			return force === 'N' ? 'N/mm' : 'lb/in';
-		case 'force':
-			return force === 'N' ? 'N' : 'lb';
-		case 'mass':
-			return force === 'N' ? 'kg' : 'lb';
-		case 'frequency':
-			return 'Hz';
-		default:
-			return '';
-	}
+/**
+ * Toe of one wheel as a length: how much nearer the rim's front edge is than its rear edge, over the diameter at which it is
+ * measured. Exact for a flat disc: D · sin(toe).
+ */
+export function toeAsLength(toeDegrees: number, diameterMm: number): number {
+	return diameterMm * Math.sin(toeDegrees / DEGREES_PER_RADIAN);
+}
+
+/** Toe of one wheel in degrees from the length over a diameter, or null where the length is longer than the diameter. */
+export function toeFromLength(lengthMm: number, diameterMm: number): number | null {
+	const sine = lengthMm / diameterMm;
+	return Math.abs(sine) <= 1 ? Math.asin(sine) * DEGREES_PER_RADIAN : null;
 }
