@@ -5,6 +5,7 @@
 import {
 	add,
 	contactOf,
+	continues,
 	cross,
 	diskUp,
 	dot,
@@ -51,6 +52,8 @@ export interface Outside extends Attitude {
 	rollCentreByArms: number | null;
 	swingArmFront: number | null;
 	halfTrackRate: number;
+	/** What the finite differences may be off by, relative: sixth against eighth order. */
+	doubt: number;
 	/** dx/dz behind the anti-dive percentage. */
 	diveSlope: number;
 	antiDive: number | null;
@@ -168,32 +171,40 @@ const SECOND_8_CENTRE = -205 / 72;
 interface Rates {
 	first: number[];
 	second: number[];
+	doubt: number;
 }
 
-/** Derivatives over travel; the stencil shrinks until the sixth and eighth orders agree. */
+/**
+ * Derivatives over travel; the stencil shrinks until the sixth and eighth orders agree. Null within 1 mm of a bind: the
+ * narrowest first stencil reaches that far to both sides.
+ */
 function rates(link: Linkage, at: Solved, travel: number, contactLocal: V3): Rates | null {
 	let best: Rates | null = null;
-	let bestGap = Infinity;
 	for (let h = 1; h > 0.02; h /= 2) {
+		if (h < 0.25 && !best) return null;
 		const samples = stencil(link, at, travel, contactLocal, h);
 		if (!samples) continue;
-		const centre = sample(link, at.pose, contactLocal);
-		const diff = (w: number[], k: number): number =>
-			w.reduce((sum, weight, j) => sum + weight * ((samples[j]?.[0]?.[k] ?? 0) - (samples[j]?.[1]?.[k] ?? 0)), 0) / h;
-		const first = centre.map((_, k) => diff(FIRST_8, k));
-		const second = centre.map(
-			(c, k) =>
-				(SECOND_8_CENTRE * c +
-					SECOND_8.reduce((s, w, j) => s + w * ((samples[j]?.[0]?.[k] ?? 0) + (samples[j]?.[1]?.[k] ?? 0)), 0)) /
-				(h * h)
-		);
-		const gap = first.reduce((g, d, k) => {
-			return Number.isNaN(d) ? g : Math.max(g, Math.abs(d - diff(FIRST_6, k)) / (1 + Math.abs(d)));
-		}, 0);
-		if (gap < bestGap) [best, bestGap] = [{ first, second }, gap];
-		if (gap < 1e-10) break;
+		const next = differences(sample(link, at.pose, contactLocal), samples, h);
+		if (!best || next.doubt < best.doubt) best = next;
+		if (best.doubt < 1e-9) break;
 	}
 	return best;
+}
+
+function differences(centre: number[], samples: number[][][], h: number): Rates {
+	const pick = (j: number, way: 0 | 1, k: number): number => samples[j]?.[way]?.[k] ?? 0;
+	const slope = (w: number[], k: number): number =>
+		w.reduce((sum, weight, j) => sum + weight * (pick(j, 0, k) - pick(j, 1, k)), 0) / h;
+	const first = centre.map((_, k) => slope(FIRST_8, k));
+	const second = centre.map((c, k) => {
+		const sides = SECOND_8.reduce((sum, weight, j) => sum + weight * (pick(j, 0, k) + pick(j, 1, k)), 0);
+		return (SECOND_8_CENTRE * c + sides) / (h * h);
+	});
+	const doubt = first.reduce(
+		(g, d, k) => (Number.isNaN(d) ? g : Math.max(g, Math.abs(d - slope(FIRST_6, k)) / (1 + Math.abs(d)))),
+		0
+	);
+	return { first, second, doubt };
 }
 
 /** Samples at plus and minus 1 to 4 steps of `h` mm of travel; null where one of them is out of reach. */
@@ -203,7 +214,7 @@ function stencil(link: Linkage, at: Solved, travel: number, contactLocal: V3, h:
 		let here = at;
 		for (let j = 1; j <= 4; j++) {
 			const next = solveNear(link, { point: 'hub', z: rideHub(link) + travel + sign * j * h }, here.pose);
-			if (!next || next.signs.some((s, i) => s !== at.signs[i])) return null;
+			if (!next || !continues(next, here)) return null;
 			here = next;
 			out[j - 1]?.push(sample(link, here.pose, contactLocal));
 		}
@@ -222,10 +233,12 @@ function byArms(
 	};
 	const [a, b, e] = cut(points.upperFront, points.upperRear, points.upperBall);
 	const [c, d, f] = cut(points.lowerFront, points.lowerRear, points.lowerBall);
+	// The centre is (across / det, up / det); with parallel arms it is a direction, and the roll centre still exists.
 	const det = a * d - b * c;
-	if (Math.abs(det) < 1e-14) return { centre: null, height: null };
-	const centre: [number, number] = [(e * d - b * f) / det, (a * f - e * c) / det];
-	return { centre, height: (-contact[1] * (centre[1] - contact[2])) / (centre[0] - contact[1]) };
+	const across = e * d - b * f;
+	const up = a * f - e * c;
+	const height = finite((-contact[1] * (up - det * contact[2])) / (across - det * contact[1]));
+	return { centre: Math.abs(det) < 1e-14 ? null : [across / det, up / det], height };
 }
 
 const finite = (x: number): number | null => (Number.isFinite(x) ? x : null);
@@ -295,7 +308,8 @@ export function figuresAt(link: Linkage, at: Solved, travel: number): Outside | 
 		contactPoint: contact,
 		spinAxis: spin,
 		contactVelocity,
-		hubVelocity
+		hubVelocity,
+		doubt: d.doubt
 	};
 }
 

@@ -245,8 +245,12 @@ export function eliminate(rows: Row[]): { step: Float64Array; sign: number } | n
 const at = (a: Float64Array[], r: number, c: number): number => a[r]?.[c] ?? 0;
 
 /** Newton's method on any number of bodies; null when it does not settle. */
-export function settle(poses: Pose[], rowsOf: (poses: Pose[]) => Row[]): { poses: Pose[]; sign: number } | null {
+export function settle(
+	poses: Pose[],
+	rowsOf: (poses: Pose[]) => Row[]
+): { poses: Pose[]; first: Pose[]; sign: number } | null {
 	let now = poses;
+	let first = poses;
 	for (let i = 0; i < 25; i++) {
 		const solved = eliminate(rowsOf(now));
 		if (!solved) return null;
@@ -256,8 +260,9 @@ export function settle(poses: Pose[], rowsOf: (poses: Pose[]) => Row[]): { poses
 		}
 		if (!(size < 400)) return null;
 		now = now.map((pose, b) => advance(pose, solved.step, 6 * b));
+		if (i === 0) first = now;
 		// The error left after a step of this size is its square, far below rounding.
-		if (size < 1e-7) return { poses: now, sign: solved.sign };
+		if (size < 1e-7) return { poses: now, first, sign: solved.sign };
 	}
 	return null;
 }
@@ -266,6 +271,8 @@ export function settle(poses: Pose[], rowsOf: (poses: Pose[]) => Row[]): { poses
 export interface Solved {
 	pose: Pose;
 	signs: [number, number, number];
+	/** How far the last solution lies from its first Newton step, as a share of the way: large where the path bends. */
+	bend: number;
 }
 
 /** Signs of the three singular events: the whole linkage, the upper arm in line, the tie rod flat. */
@@ -287,10 +294,27 @@ export function solveNear(link: Linkage, closing: Closing, from: Pose): Solved |
 		return [...linkRows(link, here), pointRow(here, point, VERTICAL, point[2] - closing.z)];
 	});
 	const pose = done?.poses[0];
-	return done && pose ? { pose, signs: signsOf(link, pose, done.sign) } : null;
+	const first = done?.first[0];
+	if (!done || !pose || !first) return null;
+	return { pose, signs: signsOf(link, pose, done.sign), bend: bendOf(link, from, first, pose) };
 }
 
-const same = (a: Solved, b: Solved): boolean => a.signs.every((s, i) => s === b.signs[i]);
+/** Largest distance of a link end or the hub between two poses, mm. */
+function apart(link: Linkage, a: Pose, b: Pose): number {
+	return Math.max(...[...link.moving, link.hub].map((local) => norm(sub(place(a, local), place(b, local)))));
+}
+
+function bendOf(link: Linkage, from: Pose, first: Pose, last: Pose): number {
+	const way = apart(link, from, last);
+	return way < 1e-6 ? 0 : apart(link, first, last) / way;
+}
+
+/**
+ * Whether a solution carries on from the one before: assembled the same way, and near where the tangent pointed. The
+ * second half keeps Newton from leaping over a gap in the travel to the far side of a bind.
+ */
+export const continues = (next: Solved, before: Solved): boolean =>
+	next.bend < 0.35 && next.signs.every((s, i) => s === before.signs[i]);
 
 /**
  * Follows the linkage along a path of (linkage, closing) given for 0 to 1, from a solved position, in steps that
@@ -308,7 +332,7 @@ export function follow(
 	while (u < 1) {
 		const next = Math.min(1, u + step);
 		const tried = solveNear(...path(next), here.pose);
-		if (tried && same(tried, here)) {
+		if (tried && continues(tried, here)) {
 			u = next;
 			here = tried;
 			step *= 1.5;
