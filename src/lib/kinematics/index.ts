@@ -22,5 +22,10 @@ export type { AbsentName } from './reasons';
 export type { CornerState, CornerStateData, CoiloverState } from './state';
 export { sweepBump, type Sweep, type SweepLimit, type SweepRange } from './sweep';
 
+export { sweepRoll, type RolledCornerState, type RollCentre, type RollState } from './roll';
+export { sweepSteer, type SteeredCornerState, type SteerState } from './steering';
+export { applyAlignment, type Adjusters, type AlignmentMoves, type Stance } from './alignment';
+export { solveAlignment, type AlignmentSolution, type AlignmentTargets } from './targets';
+
 /** Rises whenever a figure may come out differently; kept beside released figures. */
 export const KERNEL_VERSION = '1.0.0';
