@@ -13,7 +13,7 @@ export default {
 		adapter: adapter({ out: buildFolder }),
 		outDir: kitFolder,
 		// The package's barrel of adapters imports every validation library there is.
-		alias: { 'superforms-zod4': 'node_modules/sveltekit-superforms/dist/adapters/zod4.js' },
+		alias: { 'superforms-zod4': 'node_modules/sveltekit-superforms/dist/adapters/zod4' },
 		csp: {
 			mode: 'auto',
 			directives: {

@@ -23,4 +23,5 @@ export const up: MigrationFn<QueryInterface> = ({ context }) =>
 		) ENGINE = InnoDB DEFAULT CHARACTER SET utf8mb4 COLLATE utf8mb4_unicode_ci
 	`);
 
-export const down: MigrationFn<QueryInterface> = ({ context }) => context.sequelize.query('DROP TABLE alignment_records');
+export const down: MigrationFn<QueryInterface> = ({ context }) =>
+	context.sequelize.query('DROP TABLE alignment_records');

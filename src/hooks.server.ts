@@ -22,7 +22,13 @@ export const handle: Handle = async ({ event, resolve }) => {
 		filterSerializedResponseHeaders: (name) => name === 'content-type'
 	});
 	harden(response.headers, event.locals.person !== null);
-	log.info({ id: event.locals.requestId, method: event.request.method, route: event.route.id, status: response.status, ms: Math.round(performance.now() - began) });
+	log.info({
+		id: event.locals.requestId,
+		method: event.request.method,
+		route: event.route.id,
+		status: response.status,
+		ms: Math.round(performance.now() - began)
+	});
 	return response;
 };
 

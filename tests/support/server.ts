@@ -9,7 +9,13 @@ export const ORIGIN = 'http://localhost:4173';
 /** The application's server modules on a database of the file's own. */
 export async function openTestServer() {
 	const db = await createTestDatabase();
-	Object.assign(process.env, { DATABASE_URL: db.url, ORIGIN, HOST: 'localhost', LOG_LEVEL: 'silent', TRAMMEL_PRIVATE_DATABASE: '1' });
+	Object.assign(process.env, {
+		DATABASE_URL: db.url,
+		ORIGIN,
+		HOST: 'localhost',
+		LOG_LEVEL: 'silent',
+		TRAMMEL_PRIVATE_DATABASE: '1'
+	});
 	openDatabase(db.url);
 	return {
 		...db,
@@ -35,11 +41,20 @@ export class Visitor {
 	constructor(readonly ip = '203.0.113.7') {}
 
 	/** An event with its session read, as hooks.server.ts does before any handler runs. */
-	async event(path: string, { method = 'GET', params = {}, headers = {}, body, form }: Asked = {}): Promise<RequestEvent> {
+	async event(
+		path: string,
+		{ method = 'GET', params = {}, headers = {}, body, form }: Asked = {}
+	): Promise<RequestEvent> {
 		const url = new URL(path, ORIGIN);
 		const sent = new Headers({ ...(method === 'GET' ? {} : { origin: ORIGIN }), ...headers });
 		if (body !== undefined && !sent.has('content-type')) sent.set('content-type', 'application/json');
-		const payload = form ? toForm(form) : typeof body === 'string' ? body : body === undefined ? null : JSON.stringify(body);
+		const payload = form
+			? toForm(form)
+			: typeof body === 'string'
+				? body
+				: body === undefined
+					? null
+					: JSON.stringify(body);
 		const event = {
 			url,
 			params,
@@ -74,7 +89,9 @@ function toForm(fields: Record<string, string | string[]>): FormData {
 }
 
 /** Runs what is expected to end in a refusal or redirect; gives its status, place and message. */
-export async function refusal(work: Promise<unknown> | (() => unknown)): Promise<{ status: number; location?: string; message?: string }> {
+export async function refusal(
+	work: Promise<unknown> | (() => unknown)
+): Promise<{ status: number; location?: string; message?: string }> {
 	try {
 		await (typeof work === 'function' ? work() : work);
 	} catch (thrown) {

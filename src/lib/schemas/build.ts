@@ -76,14 +76,30 @@ export const buildInputSchema = z.object({
 });
 export type BuildInput = z.infer<typeof buildInputSchema>;
 
-/** What the API takes to change a build: only the keys given change. Defaults are dropped, or a missing key would reset its field. */
+/** A field that may be left out; its default is dropped, or a missing key would reset the stored value. */
+function maybe<Field extends z.ZodType>(field: z.ZodDefault<Field> | Field) {
+	return (field instanceof z.ZodDefault ? (field.unwrap() as Field) : field).optional();
+}
+
+const { shape } = buildInputSchema;
+
+/** What the API takes to change a build: only the keys given change. */
 export const buildPatchSchema = z.object({
-	...(Object.fromEntries(
-		Object.entries(buildInputSchema.shape).map(([key, field]) => [
-			key,
-			(field instanceof z.ZodDefault ? field.unwrap() : field).optional()
-		])
-	) as { [K in keyof BuildInput]: z.ZodOptional<z.ZodType<BuildInput[K]>> }),
+	name: maybe(shape.name),
+	client: maybe(shape.client),
+	stage: maybe(shape.stage),
+	datum: maybe(shape.datum),
+	wheelbase: maybe(shape.wheelbase),
+	track: maybe(shape.track),
+	tyreSize: maybe(shape.tyreSize),
+	loadedRadius: maybe(shape.loadedRadius),
+	rideHeight: maybe(shape.rideHeight),
+	frontMass: maybe(shape.frontMass),
+	rearMass: maybe(shape.rearMass),
+	unsprungCornerMass: maybe(shape.unsprungCornerMass),
+	cgHeight: maybe(shape.cgHeight),
+	frontBrakeShare: maybe(shape.frontBrakeShare),
+	notes: maybe(shape.notes),
 	archived: z.boolean().optional(),
 	people: z.array(z.uuid()).max(100).optional()
 });

@@ -14,7 +14,7 @@ export interface Actor {
 }
 
 /** A request of any route; guards and helpers read only what every event has. */
-export type AnyEvent = Pick<
-	RequestEvent<Record<string, string | undefined>, string | null>,
-	'locals' | 'params' | 'url' | 'route' | 'request' | 'cookies' | 'getClientAddress'
->;
+export interface AnyEvent extends Pick<RequestEvent, 'locals' | 'url' | 'request' | 'cookies' | 'getClientAddress'> {
+	params: Partial<Record<string, string>>;
+	route: { id: string | null };
+}

@@ -5,14 +5,17 @@ import { log } from './log';
 import { problemResponse, refuse, refuseFields } from './problem';
 
 /** Wraps a JSON endpoint: writes must come from our own pages, refusals become problem+json, the unexpected an id that is in the log. */
-export function endpoint<Event extends AnyEvent>(handler: (event: Event) => Promise<Response>): (event: Event) => Promise<Response> {
+export function endpoint<Event extends AnyEvent>(
+	handler: (event: Event) => Promise<Response>
+): (event: Event) => Promise<Response> {
 	return async (event) => {
 		try {
 			checkOrigin(event);
 			return await handler(event);
 		} catch (failure) {
 			if (isRedirect(failure)) throw failure;
-			if (isHttpError(failure)) return problemResponse(failure.status, failure.body.problem ?? { detail: failure.body.message });
+			if (isHttpError(failure))
+				return problemResponse(failure.status, failure.body.problem ?? { detail: failure.body.message });
 			const id = event.locals.requestId;
 			log.error({ id, route: event.route.id, err: failure }, 'unexpected error');
 			return problemResponse(500, { detail: `Something went wrong here. The log holds the details under ${id}.`, id });
@@ -23,11 +26,16 @@ export function endpoint<Event extends AnyEvent>(handler: (event: Event) => Prom
 /** Writes carry an Origin, and it is ours; browsers send it with every request that is not a plain read. */
 function checkOrigin({ request, url }: AnyEvent): void {
 	if (request.method === 'GET' || request.method === 'HEAD') return;
-	if (request.headers.get('origin') !== url.origin) refuse(403, 'Writes are taken from the application’s own pages only.');
+	if (request.headers.get('origin') !== url.origin)
+		refuse(403, 'Writes are taken from the application’s own pages only.');
 }
 
 /** Reads a JSON body of at most `limit` bytes and checks it against `schema`; 415, 413, 400 or 422 otherwise. */
-export async function readBody<Schema extends z.ZodType>(event: AnyEvent, schema: Schema, limit = 256 * 1024): Promise<z.output<Schema>> {
+export async function readBody<Schema extends z.ZodType>(
+	event: AnyEvent,
+	schema: Schema,
+	limit = 256 * 1024
+): Promise<z.output<Schema>> {
 	const body = await readJson(event, limit);
 	const parsed = schema.safeParse(body);
 	if (parsed.success) return parsed.data;
@@ -36,7 +44,8 @@ export async function readBody<Schema extends z.ZodType>(event: AnyEvent, schema
 
 /** 415 unless the request says it carries JSON: a form of another site cannot say so. */
 export function requireJson({ request }: AnyEvent): void {
-	if (request.headers.get('content-type')?.split(';')[0]?.trim() !== 'application/json') refuse(415, 'Send application/json.');
+	if (request.headers.get('content-type')?.split(';')[0]?.trim() !== 'application/json')
+		refuse(415, 'Send application/json.');
 }
 
 async function readJson(event: AnyEvent, limit: number): Promise<unknown> {

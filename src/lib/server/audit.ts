@@ -20,10 +20,15 @@ export type AuditAct =
 	| 'stock.changed';
 
 /** Whoever acts: an actor of a shop, or a person outside any shop (null where nobody is known). */
-export type AuditSubject = Pick<Actor, 'personId' | 'shopId' | 'requestId'> | { personId: string | null; shopId: null; requestId: string };
+export type AuditSubject =
+	Pick<Actor, 'personId' | 'shopId' | 'requestId'> | { personId: string | null; shopId: null; requestId: string };
 
 /** Adds a row to the audit; rows are never changed. `detail` holds letters and act names, never what a person typed. */
-export async function note(actor: AuditSubject, act: AuditAct, { buildId = null, detail = '' }: { buildId?: string | null; detail?: string } = {}): Promise<void> {
+export async function note(
+	actor: AuditSubject,
+	act: AuditAct,
+	{ buildId = null, detail = '' }: { buildId?: string | null; detail?: string } = {}
+): Promise<void> {
 	await AuditEntry.create({
 		id: newId(),
 		shopId: actor.shopId,

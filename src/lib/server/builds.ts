@@ -33,7 +33,10 @@ export async function listBuilds(actor: Actor, query: BuildListQuery): Promise<B
 		limit: PAGE_SIZE,
 		offset: (page - 1) * PAGE_SIZE
 	});
-	const letters = await newestLetters(actor, rows.map(({ id }) => id));
+	const letters = await newestLetters(
+		actor,
+		rows.map(({ id }) => id)
+	);
 	const items = rows.map((row) =>
 		viewFor(actor.role).listItem({
 			id: row.id,
@@ -62,8 +65,16 @@ function listWhere(actor: Actor, { q, stage, archived }: BuildListQuery): WhereO
 function listOrder(actor: Actor, { sort, dir }: BuildListQuery): Order {
 	const way = (dir ?? (sort === 'updated' ? 'down' : 'up')) === 'up' ? 'ASC' : 'DESC';
 	const shown = sort === 'client' && actor.role === 'technician' ? 'name' : sort;
-	if (shown === 'stage') return [['stageOrder', way], ['updatedAt', way], ['id', way]];
-	return [[shown === 'updated' ? 'updatedAt' : shown, way], ['id', way]];
+	if (shown === 'stage')
+		return [
+			['stageOrder', way],
+			['updatedAt', way],
+			['id', way]
+		];
+	return [
+		[shown === 'updated' ? 'updatedAt' : shown, way],
+		['id', way]
+	];
 }
 
 async function newestLetters(actor: Actor, buildIds: string[]): Promise<Map<string, string>> {
@@ -87,7 +98,15 @@ export async function createBuild(actor: Actor, input: BuildInput, people: strin
 	const build = await database().transaction(async (transaction) => {
 		const now = new Date();
 		const made = await Build.create(
-			{ id: newId(), shopId: actor.shopId, ...columns(input), archived: false, archivedAt: null, createdAt: now, updatedAt: now },
+			{
+				id: newId(),
+				shopId: actor.shopId,
+				...columns(input),
+				archived: false,
+				archivedAt: null,
+				createdAt: now,
+				updatedAt: now
+			},
 			{ transaction }
 		);
 		await Draft.create(
@@ -129,21 +148,34 @@ export async function changeBuild(actor: Actor, buildId: string, patch: BuildPat
 	return toFacts(actor, build);
 }
 
-async function carryToDraft(actor: Actor, build: Build, before: BuildInput, after: BuildInput, transaction: Transaction): Promise<void> {
+async function carryToDraft(
+	actor: Actor,
+	build: Build,
+	before: BuildInput,
+	after: BuildInput,
+	transaction: Transaction
+): Promise<void> {
 	const draft = await Draft.findOne({ where: { shopId: actor.shopId, buildId: build.id }, transaction, lock: true });
 	if (!draft) return;
 	const document: AxleDocument = readDocument(draft.document);
 	const carried = canonical(carryFacts(document, before, after));
 	if (carried === draft.document) return;
-	await draft.update({ document: carried, version: draft.version + 1, updatedAt: build.updatedAt, updatedBy: actor.personId }, { transaction });
+	await draft.update(
+		{ document: carried, version: draft.version + 1, updatedAt: build.updatedAt, updatedBy: actor.personId },
+		{ transaction }
+	);
 }
 
 /** Sets exactly these people as the build's technicians and clients; anyone else in the list is refused by name of the field. */
 async function assign(actor: Actor, buildId: string, people: string[], transaction: Transaction): Promise<void> {
 	const wanted = [...new Set(people)];
 	const { shopId } = actor;
-	const known = await Membership.count({ where: { shopId, personId: wanted, role: ['technician', 'client'] }, transaction });
-	if (known !== wanted.length) refuseFields([{ field: 'people', message: 'People: technicians and clients of this shop only.' }]);
+	const known = await Membership.count({
+		where: { shopId, personId: wanted, role: ['technician', 'client'] },
+		transaction
+	});
+	if (known !== wanted.length)
+		refuseFields([{ field: 'people', message: 'People: technicians and clients of this shop only.' }]);
 	await BuildPersonRow.destroy({ where: { shopId, buildId, personId: { [Op.notIn]: wanted } }, transaction });
 	const createdAt = new Date();
 	await BuildPersonRow.bulkCreate(
@@ -156,12 +188,18 @@ async function readPeople(actor: Actor, buildId: string): Promise<BuildPerson[]>
 	const rows = await Membership.findAll({
 		where: {
 			shopId: actor.shopId,
-			personId: (await BuildPersonRow.findAll({ attributes: ['personId'], where: { shopId: actor.shopId, buildId } })).map((row) => row.personId)
+			personId: (
+				await BuildPersonRow.findAll({ attributes: ['personId'], where: { shopId: actor.shopId, buildId } })
+			).map((row) => row.personId)
 		},
 		include: { model: Person, as: 'person', attributes: ['name'] },
 		order: [[{ model: Person, as: 'person' }, 'name', 'ASC']]
 	});
-	return rows.map(({ personId, role, person }) => ({ id: personId, name: person?.name ?? '', role: role === 'client' ? 'client' : 'technician' }));
+	return rows.map(({ personId, role, person }) => ({
+		id: personId,
+		name: person?.name ?? '',
+		role: role === 'client' ? 'client' : 'technician'
+	}));
 }
 
 async function toFacts(actor: Actor, row: Build): Promise<BuildFacts> {

@@ -15,7 +15,9 @@ const place = z.tuple([mm, mm, mm], { error: 'three numbers of mm are expected: 
 const optional = z.number().nullable().optional();
 
 const geometry = z.object({
-	points: z.object(Object.fromEntries(POINT_NAMES.map((name) => [name, place])) as Record<(typeof POINT_NAMES)[number], typeof place>),
+	points: z.object(
+		Object.fromEntries(POINT_NAMES.map((name) => [name, place])) as Record<(typeof POINT_NAMES)[number], typeof place>
+	),
 	wheel: z.object({ track: mm, x: mm, loadedRadius: mm, camber: z.number(), toe: z.number() }),
 	coilover: z
 		.object({
@@ -63,7 +65,9 @@ export async function limitBump(person: SignedInPerson): Promise<void> {
 		await limiter.consume(person.id);
 	} catch (refusal) {
 		if (!(refusal instanceof RateLimiterRes)) throw refusal;
-		refuse(429, 'Too many computations in a minute; wait a little.', { retryAfter: Math.max(1, Math.ceil(refusal.msBeforeNext / 1000)) });
+		refuse(429, 'Too many computations in a minute; wait a little.', {
+			retryAfter: Math.max(1, Math.ceil(refusal.msBeforeNext / 1000))
+		});
 	}
 }
 

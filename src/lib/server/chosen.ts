@@ -19,7 +19,11 @@ export interface Compared {
  * The revision named by `?rev=` (404 when it is not the actor's to see); without one null, which means the draft, or
  * for those who do not see drafts the newest revision they may see.
  */
-export async function chosenRevision(actor: Actor, buildId: string, letter: string | null): Promise<RevisionFull | null> {
+export async function chosenRevision(
+	actor: Actor,
+	buildId: string,
+	letter: string | null
+): Promise<RevisionFull | null> {
 	if (letter) return readRevision(actor, buildId, letter.toUpperCase());
 	if (can(actor.role, 'draft.read')) return null;
 	const [newest] = await listRevisions(actor, buildId);
@@ -28,9 +32,22 @@ export async function chosenRevision(actor: Actor, buildId: string, letter: stri
 
 /** The two to four geometries named by `?revs=B,C,draft`; without one the newest revision and the draft, or the newest two. */
 export async function comparedRevisions(actor: Actor, buildId: string, names: string | null): Promise<Compared[]> {
-	const wanted = names ? [...new Set(names.split(',').map((name) => name.trim()).filter(Boolean))] : await proposed(actor, buildId);
+	const wanted = names
+		? [
+				...new Set(
+					names
+						.split(',')
+						.map((name) => name.trim())
+						.filter(Boolean)
+				)
+			]
+		: await proposed(actor, buildId);
 	if (wanted.length > 4) refuse(400, 'Compare takes two to four: revision letters or "draft".');
-	return Promise.all(wanted.map((name) => (name.toLowerCase() === 'draft' ? readComparedDraft(actor, buildId) : readCompared(actor, buildId, name))));
+	return Promise.all(
+		wanted.map((name) =>
+			name.toLowerCase() === 'draft' ? readComparedDraft(actor, buildId) : readCompared(actor, buildId, name)
+		)
+	);
 }
 
 async function proposed(actor: Actor, buildId: string): Promise<string[]> {

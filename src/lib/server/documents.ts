@@ -31,7 +31,10 @@ export function solveDocument(document: AxleDocument): SolvedAxle {
 	const read = axleGeometry(document);
 	if ('missing' in read) {
 		refuseFields(
-			read.missing.map(({ path, label }) => ({ field: path, message: `${label} is missing.` })),
+			read.missing.map(({ path, label }) => ({
+				field: /^(left|right)\./.test(path) ? path : `left.${path}`,
+				message: `${label}: not entered yet.`
+			})),
 			'The geometry is not complete yet.'
 		);
 	}

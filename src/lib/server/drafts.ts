@@ -29,7 +29,12 @@ export async function readDraft(actor: Actor, buildId: string, transaction?: Tra
 }
 
 /** Replaces the draft when `version` is still the current one; otherwise 409 with what is stored now. */
-export async function writeDraft(actor: Actor, buildId: string, version: number, document: AxleDocument): Promise<DraftSaved> {
+export async function writeDraft(
+	actor: Actor,
+	buildId: string,
+	version: number,
+	document: AxleDocument
+): Promise<DraftSaved> {
 	return replaceDraft(actor, buildId, version, { document: canonical(document) });
 }
 
@@ -58,5 +63,7 @@ export async function replaceDraft(
 /** 409 with the draft as it is stored now. */
 export async function refuseStale(actor: Actor, buildId: string, transaction?: Transaction): Promise<never> {
 	const { version, document, updatedAt, updatedBy } = await readDraft(actor, buildId, transaction);
-	refuse(409, `${updatedBy} changed the draft in the meantime.`, { current: { version, document, updatedAt, updatedBy } });
+	refuse(409, `${updatedBy} changed the draft in the meantime.`, {
+		current: { version, document, updatedAt, updatedBy }
+	});
 }

@@ -15,7 +15,11 @@ const settings = z.object({
 		.string({ error: 'is missing; give the address people type, such as https://shop.example.com' })
 		.refine(isOrigin, 'must be an address without a path, such as https://shop.example.com'),
 	HOST: z.string().min(1).default('0.0.0.0'),
-	LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent'], { error: 'is one of fatal, error, warn, info, debug, silent' }).default('info'),
+	LOG_LEVEL: z
+		.enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent'], {
+			error: 'is one of fatal, error, warn, info, debug, silent'
+		})
+		.default('info'),
 	TRAMMEL_PRIVATE_DATABASE: flag
 });
 
@@ -45,12 +49,22 @@ export function readEnv(source: Record<string, string | undefined>): Env {
 	const { DATABASE_URL, ORIGIN, HOST, LOG_LEVEL, TRAMMEL_PRIVATE_DATABASE } = parsed.data;
 	const demo = TRAMMEL_PRIVATE_DATABASE === '1';
 	if (demo && !isLoopback(new URL(DATABASE_URL).hostname)) {
-		throw new SettingsError('TRAMMEL_PRIVATE_DATABASE is 1, but DATABASE_URL is not on this machine; unset it for a shared database.');
+		throw new SettingsError(
+			'TRAMMEL_PRIVATE_DATABASE is 1, but DATABASE_URL is not on this machine; unset it for a shared database.'
+		);
 	}
 	if (demo && !isLoopback(HOST)) {
-		throw new SettingsError(`TRAMMEL_PRIVATE_DATABASE is 1, but HOST is ${HOST}: the demo's published sign-ins work only on localhost.`);
+		throw new SettingsError(
+			`TRAMMEL_PRIVATE_DATABASE is 1, but HOST is ${HOST}: the demo's published sign-ins work only on localhost.`
+		);
 	}
-	return { databaseUrl: DATABASE_URL, origin: ORIGIN, secure: ORIGIN.startsWith('https://'), logLevel: LOG_LEVEL, demo };
+	return {
+		databaseUrl: DATABASE_URL,
+		origin: ORIGIN,
+		secure: ORIGIN.startsWith('https://'),
+		logLevel: LOG_LEVEL,
+		demo
+	};
 }
 
 let current: Env | null = null;

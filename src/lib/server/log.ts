@@ -3,14 +3,18 @@ import pino from 'pino';
 /** Error fields that may go to the log: kind, code, message without addresses, and where in the code; never a statement or its values. */
 function describeError(error: unknown): Record<string, unknown> {
 	if (!(error instanceof Error)) return { type: typeof error };
-	const code = (error as { code?: unknown; parent?: { code?: unknown } }).parent?.code ?? (error as { code?: unknown }).code;
+	const code =
+		(error as { code?: unknown; parent?: { code?: unknown } }).parent?.code ?? (error as { code?: unknown }).code;
 	// A database error's message quotes values; its code and place are enough.
 	const quotesValues = /^(Sequelize|SqlError)/.test(error.name) || error.constructor.name === 'SqlError';
 	return {
 		type: error.name,
 		...(code === undefined ? {} : { code }),
 		...(quotesValues ? {} : { message: withoutAddresses(error.message) }),
-		stack: (error.stack ?? '').split('\n').filter((line) => /^\s+at /.test(line)).slice(0, 20)
+		stack: (error.stack ?? '')
+			.split('\n')
+			.filter((line) => /^\s+at /.test(line))
+			.slice(0, 20)
 	};
 }
 

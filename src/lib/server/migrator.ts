@@ -35,7 +35,8 @@ export async function pendingMigrations(databaseUrl: string): Promise<string[]> 
 /** Fills the demo shop; rows already there stay as they are. Only for a database on this machine: its passwords are published. */
 export async function seedDemo(databaseUrl: string): Promise<void> {
 	const { hostname } = new URL(databaseUrl);
-	if (!isLoopback(hostname)) throw new Error('The demo is seeded only into a database on this machine (its sign-ins are published).');
+	if (!isLoopback(hostname))
+		throw new Error('The demo is seeded only into a database on this machine (its sign-ins are published).');
 	await withDatabase(databaseUrl, (sequelize) =>
 		withLock(sequelize, async () => {
 			for (const name of stepNames(seedersFolder)) {
@@ -57,7 +58,10 @@ async function loadStep(folder: string, name: string): Promise<Step> {
 	return (await import(/* @vite-ignore */ pathToFileURL(path.join(folder, `${name}.ts`)).href)) as Step;
 }
 
-async function withDatabase<Result>(databaseUrl: string, work: (sequelize: Sequelize) => Promise<Result>): Promise<Result> {
+async function withDatabase<Result>(
+	databaseUrl: string,
+	work: (sequelize: Sequelize) => Promise<Result>
+): Promise<Result> {
 	const sequelize = connect(databaseUrl, { poolSize: 3 });
 	try {
 		return await work(sequelize);
@@ -91,8 +95,12 @@ async function withLock<Result>(sequelize: Sequelize, work: () => Promise<Result
 	const name = `trammel:${sequelize.getDatabaseName()}`.slice(0, 64);
 	return sequelize.transaction(async (transaction) => {
 		const options = { transaction, type: QueryTypes.SELECT, replacements: { name, wait: LOCK_WAIT_S } } as const;
-		const [row] = await sequelize.query<{ got: number | string | null }>('SELECT GET_LOCK(:name, :wait) AS got', options);
-		if (Number(row?.got) !== 1) throw new Error('Another process is changing this database; try again when it has finished.');
+		const [row] = await sequelize.query<{ got: number | string | null }>(
+			'SELECT GET_LOCK(:name, :wait) AS got',
+			options
+		);
+		if (Number(row?.got) !== 1)
+			throw new Error('Another process is changing this database; try again when it has finished.');
 		try {
 			return await work();
 		} finally {

@@ -33,5 +33,9 @@ export async function listAssignable(actor: Actor): Promise<BuildPerson[]> {
 		include: { model: Person, as: 'person', attributes: ['name'] },
 		order: [[{ model: Person, as: 'person' }, 'name', 'ASC']]
 	});
-	return rows.map(({ personId, role, person }) => ({ id: personId, name: person?.name ?? '', role: role === 'client' ? 'client' : 'technician' }));
+	return rows.map(({ personId, role, person }) => ({
+		id: personId,
+		name: person?.name ?? '',
+		role: role === 'client' ? 'client' : 'technician'
+	}));
 }

@@ -25,7 +25,11 @@ const TITLES: Record<number, string> = {
 };
 
 /** Ends the request with an expected refusal: an error page for pages, problem+json for endpoints. */
-export function refuse(status: number, detail: string, extra: Omit<Problem, 'type' | 'status' | 'title' | 'detail'> = {}): never {
+export function refuse(
+	status: number,
+	detail: string,
+	extra: Omit<Problem, 'type' | 'status' | 'title' | 'detail'> = {}
+): never {
 	error(status, { message: detail, problem: { detail, ...extra } });
 }
 
@@ -35,13 +39,25 @@ export function refuseUnknown(): never {
 }
 
 /** 422 naming each field at fault. */
-export function refuseFields(errors: FieldError[], detail = errors[0]?.message ?? 'Some of it cannot be accepted.'): never {
+export function refuseFields(
+	errors: FieldError[],
+	detail = errors[0]?.message ?? 'Some of it cannot be accepted.'
+): never {
 	refuse(422, detail, { errors });
 }
 
 /** The answer body and headers for a problem (RFC 9457). */
-export function problemResponse(status: number, { detail, ...extra }: Omit<Problem, 'type' | 'status' | 'title'>): Response {
-	const body: Problem = { type: 'about:blank', title: TITLES[status] ?? 'The request failed', status, detail, ...extra };
+export function problemResponse(
+	status: number,
+	{ detail, ...extra }: Omit<Problem, 'type' | 'status' | 'title'>
+): Response {
+	const body: Problem = {
+		type: 'about:blank',
+		title: TITLES[status] ?? 'The request failed',
+		status,
+		detail,
+		...extra
+	};
 	const headers: Record<string, string> = { 'content-type': 'application/problem+json' };
 	if (extra.retryAfter !== undefined) headers['retry-after'] = String(extra.retryAfter);
 	return new Response(JSON.stringify(body), { status, headers });

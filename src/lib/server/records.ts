@@ -58,7 +58,12 @@ export async function addRecord(
 	return { record: toRecord(actor, row, number, author?.name), created };
 }
 
-function toRecord(actor: Actor, row: AlignmentRow, number: number, authorName = row.author?.name ?? ''): AlignmentRecord {
+function toRecord(
+	actor: Actor,
+	row: AlignmentRow,
+	number: number,
+	authorName = row.author?.name ?? ''
+): AlignmentRecord {
 	return viewFor(actor.role).record({
 		...(JSON.parse(row.entry) as Omit<RecordInput, 'requestId' | 'kind'>),
 		id: row.id,

@@ -29,7 +29,12 @@ export async function listRevisions(actor: Actor, buildId: string): Promise<Revi
 }
 
 /** One revision with its document, checked against its hash, and the figures stored at release; 404 when not the actor's to see. */
-export async function readRevision(actor: Actor, buildId: string, letter: string, transaction?: Transaction): Promise<RevisionFull> {
+export async function readRevision(
+	actor: Actor,
+	buildId: string,
+	letter: string,
+	transaction?: Transaction
+): Promise<RevisionFull> {
 	const row = await findRevision(actor, buildId, letter, transaction);
 	const parentReleased = row.parentNumber !== null && (await isReleased(actor, buildId, row.parentNumber));
 	const released = new Set(parentReleased && row.parentNumber !== null ? [row.parentNumber] : []);
@@ -37,7 +42,10 @@ export async function readRevision(actor: Actor, buildId: string, letter: string
 	return {
 		...summarise(actor, row, released),
 		document: readDocument(verified(row, letter)),
-		figures: figures && row.release ? { kernelVersion: row.release.kernelVersion, left: figures.left, right: figures.right } : null
+		figures:
+			figures && row.release
+				? { kernelVersion: row.release.kernelVersion, left: figures.left, right: figures.right }
+				: null
 	};
 }
 
@@ -45,11 +53,19 @@ export async function readRevision(actor: Actor, buildId: string, letter: string
  * Makes the draft permanent under the next letter: one transaction under the build's lock. A request id seen before
  * gives the revision it made. Refuses a stale version (409) and a draft that is incomplete or cannot be solved (422).
  */
-export async function keepRevision(actor: Actor, buildId: string, input: KeepInput): Promise<{ revision: RevisionSummary; created: boolean }> {
+export async function keepRevision(
+	actor: Actor,
+	buildId: string,
+	input: KeepInput
+): Promise<{ revision: RevisionSummary; created: boolean }> {
 	const { number, created } = await database().transaction(async (transaction) => {
 		await findBuild(actor, buildId, transaction, true);
 		const { shopId } = actor;
-		const same = await Revision.findOne({ attributes: ['number'], where: { shopId, buildId, requestId: input.requestId }, transaction });
+		const same = await Revision.findOne({
+			attributes: ['number'],
+			where: { shopId, buildId, requestId: input.requestId },
+			transaction
+		});
 		if (same) return { number: same.number, created: false };
 		const draft = await Draft.findOne({ where: { shopId, buildId }, transaction, lock: true });
 		if (!draft) refuseUnknown();
@@ -57,7 +73,8 @@ export async function keepRevision(actor: Actor, buildId: string, input: KeepInp
 		const document = readDocument(draft.document);
 		solveDocument(document);
 		const bytes = canonical(document);
-		const number = ((await Revision.max<number | null, Revision>('number', { where: { shopId, buildId }, transaction })) ?? 0) + 1;
+		const number =
+			((await Revision.max<number | null, Revision>('number', { where: { shopId, buildId }, transaction })) ?? 0) + 1;
 		await Revision.create(
 			{
 				id: newId(),
@@ -83,9 +100,17 @@ export async function keepRevision(actor: Actor, buildId: string, input: KeepInp
 }
 
 /** Replaces the draft by a revision's document, which becomes its parent; 409 when `version` is not the draft's. */
-export async function startDraftFrom(actor: Actor, buildId: string, version: number, letter: string): Promise<DraftData> {
+export async function startDraftFrom(
+	actor: Actor,
+	buildId: string,
+	version: number,
+	letter: string
+): Promise<DraftData> {
 	const revision = await readRevision(actor, buildId, letter);
-	await replaceDraft(actor, buildId, version, { document: canonical(revision.document), parentNumber: revision.number });
+	await replaceDraft(actor, buildId, version, {
+		document: canonical(revision.document),
+		parentNumber: revision.number
+	});
 	return readDraft(actor, buildId);
 }
 
@@ -116,7 +141,12 @@ export async function releaseRevision(actor: Actor, buildId: string, letter: str
 }
 
 /** The row behind a letter when the actor may see it; 404 otherwise. */
-export async function findRevision(actor: Actor, buildId: string, letter: string, transaction?: Transaction): Promise<Revision> {
+export async function findRevision(
+	actor: Actor,
+	buildId: string,
+	letter: string,
+	transaction?: Transaction
+): Promise<Revision> {
 	const number = revisionNumber(letter);
 	if (number === null) refuseUnknown();
 	const row = await Revision.findOne({
@@ -172,5 +202,8 @@ function summarise(actor: Actor, row: Revision, released: Set<number>): Revision
 function verified(row: Revision, letter: string): string {
 	if (sha256(row.document) === row.hash) return row.document;
 	log.error({ revision: row.id }, 'revision does not match its hash');
-	refuse(500, `Revision ${letter} does not match its fingerprint: its stored data was changed. It is not shown; restore it from a backup.`);
+	refuse(
+		500,
+		`Revision ${letter} does not match its fingerprint: its stored data was changed. It is not shown; restore it from a backup.`
+	);
 }

@@ -10,8 +10,18 @@ import { refuse } from './problem';
 export async function readStock(actor: Actor, transaction?: Transaction): Promise<ShimStock> {
 	const { shopId } = actor;
 	const within = transaction ? { transaction } : {};
-	const shelf = await ShimShelf.findByPk(shopId, { include: { model: Person, as: 'author', attributes: ['name'] }, ...within });
-	const rows = await ShimRow.findAll({ where: { shopId }, order: [['thickness', 'ASC'], ['unit', 'ASC']], ...within });
+	const shelf = await ShimShelf.findByPk(shopId, {
+		include: { model: Person, as: 'author', attributes: ['name'] },
+		...within
+	});
+	const rows = await ShimRow.findAll({
+		where: { shopId },
+		order: [
+			['thickness', 'ASC'],
+			['unit', 'ASC']
+		],
+		...within
+	});
 	return {
 		version: shelf?.version ?? 0,
 		items: rows.map(({ thickness, unit, count }) => ({ thickness, unit, count })),
@@ -26,7 +36,8 @@ export async function writeStock(actor: Actor, { version, items }: ShimStockInpu
 		const { shopId, personId } = actor;
 		await Shop.findByPk(shopId, { transaction, lock: true });
 		const current = await readStock(actor, transaction);
-		if (current.version !== version) refuse(409, `${current.updatedBy ?? 'Someone'} changed the stock in the meantime.`, { current });
+		if (current.version !== version)
+			refuse(409, `${current.updatedBy ?? 'Someone'} changed the stock in the meantime.`, { current });
 		const shelf = { version: version + 1, updatedAt: new Date(), updatedBy: personId };
 		if (version === 0) await ShimShelf.create({ shopId, ...shelf }, { transaction });
 		else await ShimShelf.update(shelf, { where: { shopId }, transaction });

@@ -16,7 +16,8 @@ export async function start(): Promise<void> {
 
 function inWords(failure: unknown): string {
 	if (failure instanceof SettingsError) return failure.message;
-	if (failure instanceof ConnectionError) return 'The database of DATABASE_URL does not answer, or refuses this user. Check the address, the password and that it runs.';
+	if (failure instanceof ConnectionError)
+		return 'The database of DATABASE_URL does not answer, or refuses this user. Check the address, the password and that it runs.';
 	if (failure instanceof DatabaseError) return 'The database is not up to date. Run npm run migrate.';
 	return failure instanceof Error ? (failure.stack ?? failure.message) : String(failure);
 }

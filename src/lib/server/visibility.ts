@@ -18,9 +18,13 @@ export async function mayKnowBuild(actor: Actor, buildId: string): Promise<boole
 }
 
 /** The build's row when the actor may know of it; 404 otherwise. With `lock` the row is held until the transaction ends. */
-export async function findBuild(actor: Actor, buildId: string, transaction?: Transaction, lock = false): Promise<Build> {
+export async function findBuild(
+	actor: Actor,
+	buildId: string,
+	transaction?: Transaction,
+	lock = false
+): Promise<Build> {
 	const where = { [Op.and]: [visibleBuilds(actor), { id: buildId }] };
 	const build = await Build.findOne({ where, ...(transaction ? { transaction, lock } : {}) });
 	return build ?? refuseUnknown();
 }
-

@@ -11,7 +11,9 @@ export function attemptsStore(sequelize: Sequelize) {
 	const { connectionManager } = sequelize;
 	return {
 		getConnection(done: (error: unknown, connection?: unknown) => void): void {
-			connectionManager.getConnection({ type: 'write' }).then((taken) => done(null, asCallbacks(taken as Connection)), done);
+			connectionManager
+				.getConnection({ type: 'write' })
+				.then((taken) => done(null, asCallbacks(taken as Connection)), done);
 		}
 	};
 

@@ -20,10 +20,16 @@ export async function easyPassword(password: string, own: string[]): Promise<str
 	const text = password.toLowerCase();
 	const bare = text.replace(/^[^\p{L}]+|[^\p{L}]+$/gu, '');
 	const unit = unitOf(text);
-	if (unit.length < text.length && (unit.length <= 4 || words.has(unit))) return 'This password repeats one short pattern; use a few different words.';
+	if (unit.length < text.length && (unit.length <= 4 || words.has(unit)))
+		return 'This password repeats one short pattern; use a few different words.';
 	if (words.has(text) || (bare.length >= text.length - 4 && words.has(bare)))
 		return 'This password is on the list of common ones; use a few words that only you put together.';
-	if (own.some((word) => word.length >= 4 && text.replace(/[^\p{L}\p{N}]/gu, '') === word.toLowerCase().replace(/[^\p{L}\p{N}]/gu, '')))
+	if (
+		own.some(
+			(word) =>
+				word.length >= 4 && text.replace(/[^\p{L}\p{N}]/gu, '') === word.toLowerCase().replace(/[^\p{L}\p{N}]/gu, '')
+		)
+	)
 		return 'This password is your own name, address or shop; use a few words that do not belong together.';
 	return null;
 }

@@ -52,7 +52,12 @@ const adapter: Adapter = {
 	},
 	async setSession({ id, userId }) {
 		const createdAt = new Date();
-		await Session.create({ idHash: sha256(id), personId: userId, createdAt, expiresAt: expiry(createdAt, createdAt.getTime()) });
+		await Session.create({
+			idHash: sha256(id),
+			personId: userId,
+			createdAt,
+			expiresAt: expiry(createdAt, createdAt.getTime())
+		});
 	},
 	async updateSessionExpiration(id) {
 		// Lucia asks when less than half the idle time is left; the row was already extended as far as its age allows.

@@ -5,7 +5,8 @@ export function localPath(next: string | null | undefined, fallback: string): st
 	if (!next || !next.startsWith('/') || /[\\\u0000-\u0020\u007f]/.test(next)) return fallback;
 	try {
 		const url = new URL(next, BASE);
-		if (url.origin !== BASE || url.pathname.startsWith('//') || /^\/(sign-(in|up|out)|api)(\/|$)/.test(url.pathname)) return fallback;
+		if (url.origin !== BASE || url.pathname.startsWith('//') || /^\/(sign-(in|up|out)|api)(\/|$)/.test(url.pathname))
+			return fallback;
 		return url.pathname + url.search + url.hash;
 	} catch {
 		return fallback;

@@ -23,7 +23,12 @@ export async function readSession(event: AnyEvent): Promise<Pick<App.Locals, 'pe
 		event.cookies.delete(cookieName(), attributes());
 		return { person: null, session: null };
 	}
-	const person: SignedInPerson = { id: user.id, name: user.name, email: user.email, preferences: readPreferences(user.preferences) };
+	const person: SignedInPerson = {
+		id: user.id,
+		name: user.name,
+		email: user.email,
+		preferences: readPreferences(user.preferences)
+	};
 	return { person, session: { id: session.id, expiresAt: session.expiresAt } };
 }
 

@@ -13,7 +13,10 @@ export type SignInResult = { ok: true; personId: string } | { ok: false; message
 const WRONG = 'This address and password do not go together. Check both and try again.';
 
 /** Signs a person in: counts the attempt, verifies once, begins a session under a new id. */
-export async function signIn(event: AnyEvent, { email, password }: Pick<SignInForm, 'email' | 'password'>): Promise<SignInResult> {
+export async function signIn(
+	event: AnyEvent,
+	{ email, password }: Pick<SignInForm, 'email' | 'password'>
+): Promise<SignInResult> {
 	const ip = event.getClientAddress();
 	const { requestId } = event.locals;
 	const person = await Person.findOne({ where: { email } });

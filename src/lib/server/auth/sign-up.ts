@@ -12,7 +12,8 @@ import { hashPassword } from './password';
 import { rememberDevice, startSession } from './session';
 
 /** Done, or why not; `field` null where no field is at fault. */
-export type SignUpResult = { ok: true; shopSlug: string } | { ok: false; field: 'email' | 'password' | null; message: string };
+export type SignUpResult =
+	{ ok: true; shopSlug: string } | { ok: false; field: 'email' | 'password' | null; message: string };
 
 const TAKEN = 'There is an account with this address already; sign in instead.';
 
@@ -31,18 +32,33 @@ export async function signUp(event: AnyEvent, form: SignUpForm): Promise<SignUpR
 		await note({ personId: made.personId, shopId: made.shopId, requestId: event.locals.requestId }, 'sign-up');
 		return { ok: true, shopSlug: made.slug };
 	} catch (failure) {
-		if (failure instanceof UniqueConstraintError && 'people_email' in failure.fields) return { ok: false, field: 'email', message: TAKEN };
+		if (failure instanceof UniqueConstraintError && 'people_email' in failure.fields)
+			return { ok: false, field: 'email', message: TAKEN };
 		throw failure;
 	}
 }
 
-async function createPersonAndShop(form: SignUpForm, passwordHash: string): Promise<{ personId: string; shopId: string; slug: string }> {
+async function createPersonAndShop(
+	form: SignUpForm,
+	passwordHash: string
+): Promise<{ personId: string; shopId: string; slug: string }> {
 	return database().transaction(async (transaction) => {
 		const createdAt = new Date();
 		const personId = newId();
 		const shopId = newId();
 		const slug = await freeSlug(form.shop, transaction);
-		await Person.create({ id: personId, name: form.name, email: form.email, passwordHash, preferences: storedDefaults(), demo: false, createdAt }, { transaction });
+		await Person.create(
+			{
+				id: personId,
+				name: form.name,
+				email: form.email,
+				passwordHash,
+				preferences: storedDefaults(),
+				demo: false,
+				createdAt
+			},
+			{ transaction }
+		);
 		await Shop.create({ id: shopId, slug, name: form.shop, techniciansSeeAll: false, createdAt }, { transaction });
 		await Membership.create({ shopId, personId, role: 'owner', createdAt }, { transaction });
 		return { personId, shopId, slug };

@@ -10,7 +10,9 @@ export function connect(databaseUrl: string, { poolSize = 10 }: { poolSize?: num
 			// DECIMAL stays exact, as strings; geometry is DOUBLE and unaffected.
 			supportBigNumbers: true,
 			bigNumberStrings: true,
-			initSql: ["SET SESSION sql_mode = 'STRICT_ALL_TABLES,NO_ENGINE_SUBSTITUTION,ERROR_FOR_DIVISION_BY_ZERO,NO_ZERO_DATE'"]
+			initSql: [
+				"SET SESSION sql_mode = 'STRICT_ALL_TABLES,NO_ENGINE_SUBSTITUTION,ERROR_FOR_DIVISION_BY_ZERO,NO_ZERO_DATE'"
+			]
 		},
 		timezone: '+00:00',
 		logging: false,

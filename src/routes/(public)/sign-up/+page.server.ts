@@ -18,8 +18,10 @@ export const actions: Actions = {
 		form.data.password = '';
 		if (!form.valid) return fail(400, { form });
 		const result = await signUp(event, { ...form.data, password });
-		if (!result.ok && result.field === null) return message(form, result.message, { status: 429 });
-		if (!result.ok) return setError(form, result.field, result.message);
+		if (!result.ok) {
+			if (result.field === null) return message(form, result.message, { status: 429 });
+			return setError(form, result.field, result.message);
+		}
 		redirect(303, `/${result.shopSlug}/builds`);
 	}
 };

@@ -81,7 +81,12 @@ export function defineBuilds(sequelize: Sequelize): void {
 		{ sequelize, tableName: 'builds' }
 	);
 	BuildPersonRow.init(
-		{ shopId: id(true), buildId: id(true), personId: id(true), createdAt: { type: DataTypes.DATE(3), allowNull: false } },
+		{
+			shopId: id(true),
+			buildId: id(true),
+			personId: id(true),
+			createdAt: { type: DataTypes.DATE(3), allowNull: false }
+		},
 		{ sequelize, tableName: 'build_people' }
 	);
 	Draft.init(

@@ -12,6 +12,7 @@ export function appendOnly(...models: ModelStatic<Model>[]): void {
 		const refuse = () => {
 			throw new Error(`${model.tableName} is append-only`);
 		};
-		for (const hook of ['beforeUpdate', 'beforeDestroy', 'beforeBulkUpdate', 'beforeBulkDestroy'] as const) model.addHook(hook, refuse);
+		for (const hook of ['beforeUpdate', 'beforeDestroy', 'beforeBulkUpdate', 'beforeBulkDestroy'] as const)
+			model.addHook(hook, refuse);
 	}
 }

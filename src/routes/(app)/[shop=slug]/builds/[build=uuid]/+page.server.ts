@@ -15,7 +15,11 @@ export const load: PageServerLoad = async (event) => {
 	const actor = await guard(event, 'build.read', event.params);
 	if (!can(actor.role, 'build.edit')) return { form: null, assignable: [] };
 	const facts = await readBuild(actor, event.params.build);
-	const form = await superValidate(fillBuildForm(facts, guardPerson(event as AnyEvent).preferences), zod(buildFormSchema), { errors: false });
+	const form = await superValidate(
+		fillBuildForm(facts, guardPerson(event as AnyEvent).preferences),
+		zod(buildFormSchema),
+		{ errors: false }
+	);
 	return { form, assignable: await listAssignable(actor) };
 };
 

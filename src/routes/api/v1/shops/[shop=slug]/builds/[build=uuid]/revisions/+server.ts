@@ -13,5 +13,8 @@ export const GET = endpoint(async (event: RequestEvent) => {
 export const POST = endpoint(async (event: RequestEvent) => {
 	const actor = await guard(event, 'revision.keep', event.params);
 	const { revision, created } = await keepRevision(actor, event.params.build, await readBody(event, keepSchema));
-	return json(revision, { status: created ? 201 : 200, headers: { location: `${event.url.pathname}/${revision.letter}` } });
+	return json(revision, {
+		status: created ? 201 : 200,
+		headers: { location: `${event.url.pathname}/${revision.letter}` }
+	});
 });
