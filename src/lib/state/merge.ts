@@ -32,9 +32,8 @@ export function same(a: unknown, b: unknown): boolean {
 }
 
 /** Objects of one kind are compared inside; a list, or a change of kind (shim to rod end, mirror to own), is one thing. */
-function divisible(...values: unknown[]): values is Record<string, unknown>[] {
-	const [first] = values;
-	return isObject(first) && values.every((value) => isObject(value) && value.kind === first.kind);
+function divisible(values: unknown[]): values is Record<string, unknown>[] {
+	return values.every(isObject) && new Set(values.map((value) => value.kind)).size === 1;
 }
 
 interface Found {
@@ -44,12 +43,12 @@ interface Found {
 
 function mergeAt(base: unknown, mine: unknown, theirs: unknown, path: Path, found: Found): unknown {
 	if (same(mine, theirs) || same(base, theirs)) return mine;
-	if (divisible(base, mine, theirs)) {
-		const parts = [base, mine, theirs] as const;
-		const keys = new Set(parts.flatMap((part) => Object.keys(part)));
+	const parts: unknown[] = [base, mine, theirs];
+	if (divisible(parts)) {
 		const merged: Record<string, unknown> = {};
-		for (const key of keys) {
-			const value = mergeAt(parts[0][key], parts[1][key], parts[2][key], [...path, key], found);
+		for (const key of new Set(parts.flatMap((part) => Object.keys(part)))) {
+			const [b, m, t] = parts.map((part) => part[key]);
+			const value = mergeAt(b, m, t, [...path, key], found);
 			if (value !== undefined) merged[key] = value;
 		}
 		return merged;
@@ -75,10 +74,12 @@ export function mergeThreeWay<T extends object>(base: T, mine: T, theirs: T): Me
 /** Every point and field in which two documents differ, by its path; a changed kind or list is one entry. */
 export function differences(before: unknown, after: unknown, path: Path = []): Path[] {
 	if (same(before, after)) return [];
-	if (!divisible(before, after)) return [path];
-	const pair = [before, after] as const;
-	const keys = new Set(pair.flatMap((part) => Object.keys(part)));
-	return [...keys].flatMap((key) => differences(pair[0][key], pair[1][key], [...path, key]));
+	const pair: unknown[] = [before, after];
+	if (!divisible(pair)) return [path];
+	return [...new Set(pair.flatMap((part) => Object.keys(part)))].flatMap((key) => {
+		const [b, a] = pair.map((part) => part[key]);
+		return differences(b, a, [...path, key]);
+	});
 }
 
 /** The value at a path, undefined where the path leads nowhere. */

@@ -1,9 +1,8 @@
-import type { PointName } from '$lib/kinematics';
+import type { Side } from '$lib/domain/datum';
+import type { PointKey } from '$lib/domain/points';
 import { createContext } from 'svelte';
 
-/** A point that can be chosen in view and table alike. */
-export type PointKey = PointName | 'coiloverTop' | 'coiloverBottom';
-export type Side = 'left' | 'right';
+export type { PointKey, Side };
 
 /** One selection for all views and the table, and the pair the trammel is set to. */
 export class Selection {

@@ -1,22 +1,19 @@
+import { evaluate, figureLines, type Evaluation } from '$lib/domain/evaluation';
 import {
 	KinematicsError,
 	solveCorner,
-	sweepBump,
 	type CornerGeometry,
 	type CornerState,
 	type Sweep,
 	type SweepRange
 } from '$lib/kinematics';
+import type { Judgement } from '$lib/domain/targets';
 import { createContext } from 'svelte';
 import type { DraftEditor } from './draft.svelte';
 import type { Selection } from './selection.svelte';
 
-/** A corner that could be solved: at ride height and over the whole range. */
-export interface Solved {
-	geometry: CornerGeometry;
-	ride: CornerState;
-	sweep: Sweep<CornerState>;
-}
+/** A corner that could be solved: at ride height, over the whole range, its targets judged. */
+export type Solved = Evaluation & { geometry: CornerGeometry };
 
 interface Attempt {
 	solved: Solved | null;
@@ -56,12 +53,14 @@ export class Solution {
 		if (!corner) return { solved: null, error: null };
 		const { value, error } = attempt<Solved>(() => ({
 			geometry: corner,
-			ride: solveCorner(corner, { travel: 0, rack: 0 }),
-			sweep: sweepBump(corner, range)
+			...evaluate(corner, this.#editor.document.targets, range)
 		}));
 		if (value) this.#last = value;
 		return { solved: value, error };
 	});
+
+	/** The list of figures at ride height, each with its targets; empty without a ride state. */
+	readonly figures = $derived.by(() => (this.#attempt.solved ? figureLines(this.#attempt.solved) : []));
 
 	readonly #atTravel = $derived.by(() => {
 		const { solved } = this.#attempt;
@@ -97,6 +96,11 @@ export class Solution {
 	/** The curves. */
 	get sweep(): Sweep<CornerState> | null {
 		return this.#attempt.solved?.sweep ?? null;
+	}
+
+	/** The targets of the document with what was reached and the verdict, in their order; empty without a ride state. */
+	get judgements(): readonly Judgement[] {
+		return this.#attempt.solved?.judgements ?? [];
 	}
 
 	/** Why the corner cannot be solved as it stands; null when it can, or while points are missing. */

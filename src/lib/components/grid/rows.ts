@@ -1,6 +1,7 @@
-import { fromDatum, toDatum, type Datum } from '$lib/domain/datum';
-import { AXLE_POINTS, type AxleDocument, type CornerEntry, type PointEntry } from '$lib/schemas/axle';
-import type { PointKey, Side } from '$lib/state/selection.svelte';
+import { axisWord, coordinateFromDatum, coordinateToDatum, DATUM_AXES, PLACE_OF } from '$lib/domain/datum';
+import type { Datum, DatumAxis, Side } from '$lib/domain/datum';
+import { entryOf, LINK_NAMES, POINT_ORDER, POINTS, type LinkKey, type PointKey } from '$lib/domain/points';
+import { FAR_MM, type AxleDocument, type CornerEntry } from '$lib/schemas/axle';
 
 /** One number of the document as the table shows it: in the builder's datum, still in mm, degrees, N, N/mm. */
 export interface GridCell {
@@ -34,65 +35,66 @@ export interface GridGroup {
 	rows: GridRow[];
 }
 
-export type Axis = 'out' | 'up' | 'fore';
-export const AXES: readonly Axis[] = ['out', 'up', 'fore'];
-
-/** Where an axis of the datum lies in a stored point [fore, out, up]. */
-const PLACE: Record<Axis, 0 | 1 | 2> = { fore: 0, out: 1, up: 2 };
-/** Limits of src/lib/schemas/axle.ts; tests/component/grid holds the two together. */
-const FAR_MM = 10_000;
-
-/** The word over a column: the builder's own fore or aft. */
-export function axisWord(axis: Axis, datum: Datum): string {
-	return axis === 'fore' ? datum.foreAft : axis;
-}
-
 /** The corner of a side, or null where the right side mirrors the left. */
 export function cornerOf(document: AxleDocument, side: Side): CornerEntry | null {
 	if (side === 'left') return document.left;
 	return document.right === 'mirror' ? null : document.right;
 }
 
-type PointOf = (corner: CornerEntry) => PointEntry | null;
-
-function pointCell(key: string, label: string, side: Side, datum: Datum, axis: Axis, pointOf: PointOf): GridCell {
-	const entryOf = (document: AxleDocument) => {
+function pointCell(point: PointKey, side: Side, datum: Datum, axis: DatumAxis): GridCell {
+	const find = (document: AxleDocument) => {
 		const corner = cornerOf(document, side);
-		return corner && pointOf(corner);
+		return corner && entryOf(corner, point);
 	};
+	const place = PLACE_OF[axis];
+	const ends = [-FAR_MM, FAR_MM].map((end) => coordinateToDatum(axis, end, datum, side) ?? 0);
 	return {
-		key: `${side}.${key}.${axis}`,
-		label: `${label}, ${axisWord(axis, datum)}`,
+		key: `${side}.${point}.${axis}`,
+		label: `${POINTS[point].name}, ${axisWord(axis, datum)}`,
 		quantity: 'length',
 		empties: true,
-		low: -FAR_MM,
-		high: FAR_MM,
-		read(document) {
-			const entry = entryOf(document);
-			return entry && toDatum(entry, datum, side)[axis];
-		},
+		low: Math.min(...ends),
+		high: Math.max(...ends),
+		read: (document) => coordinateToDatum(axis, find(document)?.[place] ?? null, datum, side),
 		write(document, value) {
-			const entry = entryOf(document);
-			if (!entry) return;
-			const moved = fromDatum({ ...toDatum(entry, datum, side), [axis]: value }, datum, side);
-			// Only the typed coordinate: the others keep their last digit.
-			entry[PLACE[axis]] = moved[PLACE[axis]];
+			const entry = find(document);
+			if (entry) entry[place] = coordinateFromDatum(axis, value, datum, side);
 		}
 	};
 }
 
-function pointRow(point: PointKey, name: string, label: string, side: Side, datum: Datum, pointOf: PointOf): GridRow {
-	return {
-		key: point,
-		name,
-		label,
-		point,
-		cells: AXES.map((axis) => pointCell(point, label, side, datum, axis, pointOf))
-	};
+/** Under the link's own name the row needs only its part of the whole name. */
+const PART: Record<PointKey, string> = {
+	upperFront: 'front pivot',
+	upperRear: 'rear pivot',
+	upperBall: 'ball joint',
+	lowerFront: 'front pivot',
+	lowerRear: 'rear pivot',
+	lowerBall: 'ball joint',
+	tieRodInner: 'inner, rack end',
+	tieRodOuter: 'outer joint',
+	coiloverTop: 'top',
+	coiloverBottom: 'bottom'
+};
+
+function pointRow(point: PointKey, side: Side, datum: Datum): GridRow {
+	const cells = DATUM_AXES.map((axis) => pointCell(point, side, datum, axis));
+	return { key: point, name: PART[point], label: POINTS[point].name, point, cells };
+}
+
+/** The same corner on the other side of the car: where its own entry begins. */
+export function mirroredCorner(corner: CornerEntry): CornerEntry {
+	const copy = structuredClone(corner);
+	for (const point of POINT_ORDER) {
+		const entry = entryOf(copy, point);
+		if (entry && entry[1] !== null) entry[1] = 0 - entry[1];
+	}
+	return copy;
 }
 
 type WheelField = 'track' | 'loadedRadius' | 'camber' | 'toe';
 type CoiloverField = 'rate' | 'forceAtRide' | 'openLength' | 'closedLength';
+/** The limits of src/lib/schemas/axle.ts; tests/component/grid holds the two together. */
 type Limits = Pick<GridCell, 'quantity' | 'empties' | 'low' | 'high'>;
 
 const WHEEL: { field: WheelField; name: string; limits: Limits }[] = [
@@ -143,36 +145,16 @@ function coiloverRow(side: Side, { field, name, limits }: (typeof COILOVER)[numb
 	return { key: `coilover.${field}`, name, label: cell.label, point: null, cells: [cell] };
 }
 
-/** Row heads of the points: the link's part, and the whole name. */
-const POINT_ROWS: Record<(typeof AXLE_POINTS)[number], { name: string; group: 'upper' | 'lower' | 'tieRod' }> = {
-	upperFront: { name: 'front pivot', group: 'upper' },
-	upperRear: { name: 'rear pivot', group: 'upper' },
-	upperBall: { name: 'ball joint', group: 'upper' },
-	lowerFront: { name: 'front pivot', group: 'lower' },
-	lowerRear: { name: 'rear pivot', group: 'lower' },
-	lowerBall: { name: 'ball joint', group: 'lower' },
-	tieRodInner: { name: 'inner, at the rack', group: 'tieRod' },
-	tieRodOuter: { name: 'outer, at the arm', group: 'tieRod' }
-};
-const LINKS = { upper: 'Upper arm', lower: 'Lower arm', tieRod: 'Tie rod' } as const;
-
-/** The table's groups and rows for one side; a mirrored right side shows none. `hasCoilover` adds its points and figures. */
+/** The table's groups and rows for one side, the coil-over's only where there is one. */
 export function gridGroups(side: Side, datum: Datum, hasCoilover: boolean): GridGroup[] {
-	const links = (['upper', 'lower', 'tieRod'] as const).map((group) => ({
-		key: group,
-		title: LINKS[group],
-		rows: AXLE_POINTS.filter((point) => POINT_ROWS[point].group === group).map((point) =>
-			pointRow(point, POINT_ROWS[point].name, pointLabel(point), side, datum, (corner) => corner.points[point])
-		)
-	}));
-	const end = (which: 'top' | 'bottom', key: PointKey) =>
-		pointRow(key, which, `coil-over, ${which}`, side, datum, (corner) => corner.coilover?.[which] ?? null);
-	const coilover = {
-		key: 'coilover',
-		title: 'Coil-over',
-		rows: [end('top', 'coiloverTop'), end('bottom', 'coiloverBottom')]
-	};
-	coilover.rows.push(...COILOVER.map((field) => coiloverRow(side, field)));
-	const wheel = { key: 'wheel', title: 'Wheel', rows: WHEEL.map((field) => wheelRow(side, field)) };
-	return [...links, wheel, ...(hasCoilover ? [coilover] : [])];
+	const link = (key: LinkKey): GridGroup => ({
+		key,
+		title: LINK_NAMES[key],
+		rows: POINT_ORDER.filter((point) => POINTS[point].link === key).map((point) => pointRow(point, side, datum))
+	});
+	const wheel: GridGroup = { key: 'wheel', title: 'wheel', rows: WHEEL.map((field) => wheelRow(side, field)) };
+	const groups = [link('upperArm'), link('lowerArm'), link('tieRod'), wheel];
+	if (!hasCoilover) return groups;
+	const coilover = link('coilover');
+	return [...groups, { ...coilover, rows: [...coilover.rows, ...COILOVER.map((field) => coiloverRow(side, field))] }];
 }
