@@ -82,16 +82,6 @@ function pointRow(point: PointKey, side: Side, datum: Datum): GridRow {
 	return { key: point, name: PART[point], label: POINTS[point].name, point, cells };
 }
 
-/** The same corner on the other side of the car: where its own entry begins. */
-export function mirroredCorner(corner: CornerEntry): CornerEntry {
-	const copy = structuredClone(corner);
-	for (const point of POINT_ORDER) {
-		const entry = entryOf(copy, point);
-		if (entry && entry[1] !== null) entry[1] = 0 - entry[1];
-	}
-	return copy;
-}
-
 type WheelField = 'track' | 'loadedRadius' | 'camber' | 'toe';
 type CoiloverField = 'rate' | 'forceAtRide' | 'openLength' | 'closedLength';
 /** The limits of src/lib/schemas/axle.ts; tests/component/grid holds the two together. */
