@@ -143,25 +143,42 @@ describe('limits', () => {
 		expect(rows).toEqual([{ points: 0 }]);
 		const bad = new Visitor('192.0.2.10');
 		for (let i = 0; i < 50; i++) await tryIn(bad, `person${i}@example.test`, 'wrong wrong wrong');
-		expect(await tryIn(bad, 'ada@example.test', PASSWORD)).toMatchObject({ ok: false, retryAfter: expect.any(Number) as number });
+		expect(await tryIn(bad, 'ada@example.test', PASSWORD)).toMatchObject({
+			ok: false,
+			retryAfter: expect.any(Number) as number
+		});
 	});
 
 	test('neither table of attempts nor audit holds an address', async () => {
 		await tryIn(new Visitor('192.0.2.77'), 'ada@example.test', 'wrong wrong wrong');
-		const dump = JSON.stringify([await db.query('SELECT * FROM attempts'), await db.query('SELECT * FROM audit_entries')]);
+		const dump = JSON.stringify([
+			await db.query('SELECT * FROM attempts'),
+			await db.query('SELECT * FROM audit_entries')
+		]);
 		expect(dump).not.toMatch(/ada@|192\.0\.2/);
 		expect(dump).toContain('sign-in.failed');
 	});
 });
 
 describe('sign-up', () => {
-	const form = { name: 'Bo Lark', email: 'bo@example.test', password: 'welds cool in their own time', shop: 'Winter / Daughter' };
+	const form = {
+		name: 'Bo Lark',
+		email: 'bo@example.test',
+		password: 'welds cool in their own time',
+		shop: 'Winter / Daughter'
+	};
 
 	test('a taken shop name gets a number, a taken address is said so', async () => {
 		const visitor = new Visitor();
-		expect(await signUp(await visitor.event('/sign-up', { method: 'POST' }), form)).toEqual({ ok: true, shopSlug: 'winter-daughter-2' });
+		expect(await signUp(await visitor.event('/sign-up', { method: 'POST' }), form)).toEqual({
+			ok: true,
+			shopSlug: 'winter-daughter-2'
+		});
 		expect(await personOf(visitor)).toMatchObject({ name: 'Bo Lark' });
-		expect(await signUp(await new Visitor().event('/sign-up', { method: 'POST' }), form)).toMatchObject({ ok: false, field: 'email' });
+		expect(await signUp(await new Visitor().event('/sign-up', { method: 'POST' }), form)).toMatchObject({
+			ok: false,
+			field: 'email'
+		});
 	});
 
 	test.each([
@@ -187,12 +204,20 @@ describe('sign-up', () => {
 });
 
 describe('where to go after sign-in', () => {
-	test.each(['//evil.example', 'https://evil.example', '/\\evil.example', '\\\\evil.example', '/\t/evil.example', '/..//evil.example', 'javascript:alert(1)', '/sign-out', '/api/v1/me', ''])(
-		'%j is not followed',
-		(next) => {
-			expect(localPath(next, '/home')).toBe('/home');
-		}
-	);
+	test.each([
+		'//evil.example',
+		'https://evil.example',
+		'/\\evil.example',
+		'\\\\evil.example',
+		'/\t/evil.example',
+		'/..//evil.example',
+		'javascript:alert(1)',
+		'/sign-out',
+		'/api/v1/me',
+		''
+	])('%j is not followed', (next) => {
+		expect(localPath(next, '/home')).toBe('/home');
+	});
 	test('a local path with its search is', () => {
 		expect(localPath('/winter/builds?stage=quoted', '/home')).toBe('/winter/builds?stage=quoted');
 	});

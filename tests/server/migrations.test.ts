@@ -13,7 +13,9 @@ afterAll(async () => {
 async function schema(): Promise<string[]> {
 	const tables = await db.query('SHOW TABLES');
 	const names = tables.map((row) => String(Object.values(row)[0])).sort();
-	return Promise.all(names.map(async (name) => String((await db.query(`SHOW CREATE TABLE ${name}`))[0]?.['Create Table'])));
+	return Promise.all(
+		names.map(async (name) => String((await db.query(`SHOW CREATE TABLE ${name}`))[0]?.['Create Table']))
+	);
 }
 
 describe('migrations', () => {

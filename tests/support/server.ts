@@ -1,5 +1,6 @@
 import type { RequestEvent } from '@sveltejs/kit';
 import { closeDatabase, openDatabase } from '../../src/lib/server/db';
+import { log } from '../../src/lib/server/log';
 import { newRequestId } from '../../src/lib/server/ids';
 import { readSession } from '../../src/lib/server/auth/session';
 import { createTestDatabase } from './db';
@@ -13,9 +14,10 @@ export async function openTestServer() {
 		DATABASE_URL: db.url,
 		ORIGIN,
 		HOST: 'localhost',
-		LOG_LEVEL: 'silent',
 		TRAMMEL_PRIVATE_DATABASE: '1'
 	});
+	// Expected refusals of the tests would fill the screen.
+	log.level = 'fatal';
 	openDatabase(db.url);
 	return {
 		...db,

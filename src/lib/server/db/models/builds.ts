@@ -52,7 +52,8 @@ export class Draft extends Model<InferAttributes<Draft>, InferCreationAttributes
 }
 
 export function defineBuilds(sequelize: Sequelize): void {
-	const measure = { type: DataTypes.DOUBLE, allowNull: true };
+	// A fresh object each: Sequelize writes the column's name into the definition it is given.
+	const measure = () => ({ type: DataTypes.DOUBLE, allowNull: true });
 	Build.init(
 		{
 			id: id(true),
@@ -62,16 +63,16 @@ export function defineBuilds(sequelize: Sequelize): void {
 			stage: { type: DataTypes.STRING(16), allowNull: false },
 			stageOrder: { type: DataTypes.TINYINT, allowNull: false },
 			datum: { type: DataTypes.TEXT('long'), allowNull: false },
-			wheelbase: measure,
-			track: measure,
+			wheelbase: measure(),
+			track: measure(),
 			tyreSize: { type: DataTypes.STRING(40), allowNull: false },
-			loadedRadius: measure,
-			rideHeight: measure,
-			frontMass: measure,
-			rearMass: measure,
-			unsprungCornerMass: measure,
-			cgHeight: measure,
-			frontBrakeShare: measure,
+			loadedRadius: measure(),
+			rideHeight: measure(),
+			frontMass: measure(),
+			rearMass: measure(),
+			unsprungCornerMass: measure(),
+			cgHeight: measure(),
+			frontBrakeShare: measure(),
 			notes: { type: DataTypes.TEXT, allowNull: false },
 			archived: { type: DataTypes.BOOLEAN, allowNull: false, defaultValue: false },
 			archivedAt: { type: DataTypes.DATE(3), allowNull: true },

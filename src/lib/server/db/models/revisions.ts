@@ -60,9 +60,10 @@ export class AuditEntry extends Model<InferAttributes<AuditEntry>, InferCreation
 }
 
 export function defineRevisions(sequelize: Sequelize): void {
-	const hash = { type: DataTypes.CHAR(64), allowNull: false };
-	const moment = { type: DataTypes.DATE(3), allowNull: false };
-	const json = { type: DataTypes.TEXT('long'), allowNull: false };
+	// Fresh objects each: Sequelize writes the column's name into the definition it is given.
+	const hash = () => ({ type: DataTypes.CHAR(64), allowNull: false });
+	const moment = () => ({ type: DataTypes.DATE(3), allowNull: false });
+	const json = () => ({ type: DataTypes.TEXT('long'), allowNull: false });
 	Revision.init(
 		{
 			id: id(true),
@@ -71,10 +72,10 @@ export function defineRevisions(sequelize: Sequelize): void {
 			number: { type: DataTypes.INTEGER, allowNull: false },
 			parentNumber: { type: DataTypes.INTEGER, allowNull: true },
 			note: { type: DataTypes.STRING(500), allowNull: false },
-			document: json,
-			hash,
+			document: json(),
+			hash: hash(),
 			requestId: id(),
-			createdAt: moment,
+			createdAt: moment(),
 			createdBy: id()
 		},
 		{ sequelize, tableName: 'revisions' }
@@ -85,9 +86,9 @@ export function defineRevisions(sequelize: Sequelize): void {
 			shopId: id(),
 			buildId: id(),
 			revisionId: id(),
-			figures: json,
+			figures: json(),
 			kernelVersion: { type: DataTypes.STRING(40), allowNull: false },
-			releasedAt: moment,
+			releasedAt: moment(),
 			releasedBy: id()
 		},
 		{ sequelize, tableName: 'releases' }
@@ -98,11 +99,11 @@ export function defineRevisions(sequelize: Sequelize): void {
 			shopId: id(),
 			buildId: id(),
 			revisionId: id(),
-			revisionHash: hash,
+			revisionHash: hash(),
 			kind: { type: DataTypes.STRING(8), allowNull: false },
-			entry: json,
+			entry: json(),
 			requestId: id(),
-			createdAt: moment,
+			createdAt: moment(),
 			createdBy: id()
 		},
 		{ sequelize, tableName: 'alignment_records' }
@@ -116,7 +117,7 @@ export function defineRevisions(sequelize: Sequelize): void {
 			buildId: { type: DataTypes.CHAR(36), allowNull: true },
 			detail: { type: DataTypes.STRING(200), allowNull: false },
 			requestId: { type: DataTypes.STRING(36), allowNull: false },
-			createdAt: moment
+			createdAt: moment()
 		},
 		{ sequelize, tableName: 'audit_entries' }
 	);
