@@ -39,5 +39,7 @@ export function lastLines(text, count = 12) {
 
 /** Whether a program's output says that the disk is full. */
 export function saysDiskFull(output) {
-	return /No space left on device|ENOSPC|Errcode: 28|error: 28\b|enough free space/i.test(output);
+	return /No space left on device|ENOSPC|Errcode: 28|error: 28\b|enough free space|Disk (got )?full|table '.*' is full/i.test(
+		output
+	);
 }

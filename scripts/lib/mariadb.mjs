@@ -16,13 +16,15 @@ const startDeadline = 60_000; // ms; a crash recovery on a slow disk takes its t
  *
  * Gives `{ url, rootUrl, port, pid, dir, exited, stop() }`: `url` is the application's user on `database`, `rootUrl`
  * a user who may create databases, `exited` resolves with the log's last lines when the server ends.
+ *
+ * @param {{ dir: string, database?: string, port?: number, fast?: boolean }} options
  */
 export async function startMariadb({ dir, database = 'trammel', port, fast = false }) {
 	const mariadbd = requireProgram('mariadbd', 'mariadb-server-core');
 	const folder = path.resolve(dir);
 	await stopMariadb(folder);
-	const { data, credentials } = await prepareFolder(folder, mariadbd);
 	const chosen = await choosePort(port);
+	const { data, credentials } = await prepareFolder(folder, mariadbd);
 	const initFile = path.join(folder, 'users.sql');
 	writeFileSync(initFile, userStatements(database, credentials), { mode: 0o600 });
 	const logFile = path.join(folder, 'server.log');
