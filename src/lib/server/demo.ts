@@ -7,7 +7,7 @@ export const DEMO_SIGN_INS: DemoAccount[] = [
 	{ role: 'owner', name: 'Marta Quill', email: 'owner@demo.example', password: 'square to the rail 1' },
 	{ role: 'builder', name: 'Tobias Renner', email: 'builder@demo.example', password: 'tack then measure 2' },
 	{ role: 'technician', name: 'Ines Halloran', email: 'technician@demo.example', password: 'jam nuts are tight 3' },
-	{ role: 'client', name: 'Per Lindqvist-Oye', email: 'client@demo.example', password: 'when is it ready 4' }
+	{ role: 'client', name: 'Per Sandvoll', email: 'client@demo.example', password: 'when is it ready 4' }
 ];
 
 /** The sign-ins to show on the sign-in page: only where they work, and only those that were seeded; null where there are none. */
