@@ -10,8 +10,8 @@ export interface ChartSpec {
 	series: readonly Series[];
 	bands: readonly Band[];
 	rule: DomainRule;
-	/** Writes a value of this figure. */
-	format: (value: number | null) => string;
+	/** Writes a value of this figure, with the decimals of its kind unless others are asked for (ticks). */
+	format: (value: number | null, decimals?: number) => string;
 	/** What stands at the cursor: the figure of the first series there, and of more where wanted. */
 	cursorValue: number | null;
 }

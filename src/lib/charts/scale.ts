@@ -68,28 +68,52 @@ export function chartDomain(series: readonly Series[], bands: readonly Band[], r
 	return roundOutward([middle - spread / 2, middle + spread / 2]);
 }
 
-/** A domain widened to the next step of about eight that read well (1, 2, 5 · 10ⁿ). */
-export function roundOutward([low, high]: Domain): Domain {
-	const step = niceStep((high - low) / 8);
-	return [tidy(Math.floor(low / step + 1e-9) * step), tidy(Math.ceil(high / step - 1e-9) * step)];
-}
+const TICK_FACTORS = [1, 2, 2.5, 5];
 
-function niceStep(raw: number): number {
-	const power = 10 ** Math.floor(Math.log10(raw));
-	const factor = [1, 2, 5, 10].find((one) => one * power >= raw * (1 - 1e-9)) ?? 10;
-	return factor * power;
+/** A domain widened outward to the finest step of 1, 2, 2.5 or 5 · 10ⁿ that cuts it into at most six. */
+export function roundOutward([low, high]: Domain): Domain {
+	const power = Math.floor(Math.log10((high - low) / 6));
+	for (const p of [power, power + 1]) {
+		for (const factor of TICK_FACTORS) {
+			const step = factor * 10 ** p;
+			const [first, last] = [Math.floor(low / step + 1e-9), Math.ceil(high / step - 1e-9)];
+			if (last - first <= 6) return [tidy(first * step), tidy(last * step)];
+		}
+	}
+	return [low, high];
 }
 
 const tidy = (value: number): number => Number(value.toPrecision(12)) + 0;
 
-/** Ticks a person reads, five to seven of them where the span allows; both ends of a domain are not always ticks. */
+/**
+ * Ticks a person reads: five to seven where a step of 1, 2, 2.5 or 5 · 10ⁿ gives that many, a step that lands on both
+ * ends first, then the one that lands on zero or gives six.
+ */
 export function readableTicks([low, high]: Domain): number[] {
-	const counts = [6, 5, 7, 4, 8];
-	for (const count of counts) {
-		const found = ticks(low, high, count);
-		if (found.length >= 5 && found.length <= 7) return found.map(tidy);
-	}
-	return ticks(low, high, 5).map(tidy);
+	const span = high - low;
+	if (!(span > 0)) return [low];
+	const power = Math.floor(Math.log10(span / 6));
+	const candidates = [power - 1, power, power + 1]
+		.flatMap((p) => TICK_FACTORS.map((factor) => factor * 10 ** p))
+		.map((step) => {
+			const [first, last] = [Math.ceil(low / step - 1e-9), Math.floor(high / step + 1e-9)];
+			const ends = Number(Math.abs(first * step - low) < step * 1e-6) + Number(Math.abs(last * step - high) < step * 1e-6);
+			return { step, first, count: last - first + 1, ends };
+		});
+	const good = candidates.filter(({ count }) => count >= 5 && count <= 7);
+	const pool = good.length ? good : candidates.filter(({ count }) => count >= 3 && count <= 9);
+	const best = pool.reduce<(typeof candidates)[number] | null>((kept, one) => {
+		if (!kept || one.ends > kept.ends) return one;
+		return one.ends === kept.ends && Math.abs(one.count - 6) < Math.abs(kept.count - 6) ? one : kept;
+	}, null);
+	if (!best) return ticks(low, high, 5).map(tidy);
+	return Array.from({ length: best.count }, (_, k) => tidy((best.first + k) * best.step));
+}
+
+/** Decimals that tell these ticks apart: those of their step. */
+export function tickDecimals(values: readonly number[]): number {
+	const text = (value: number) => (String(tidy(value)).split('.')[1] ?? '').length;
+	return Math.max(0, ...values.map(text));
 }
 
 /** A straight scale: value → pixel. */

@@ -33,6 +33,12 @@ const MIN_LINE = 5;
 /** JetBrains Mono is 0.6 em wide a glyph. */
 const GLYPH_EM = 0.6;
 
+/** The room a dimension's figure takes on the sheet. */
+export function textBox(layout: DimensionLayout, width: number): { x: number; y: number; w: number; h: number } {
+	const { x, y, anchor } = layout.text;
+	return { x: anchor === 'start' ? x : anchor === 'end' ? x - width : x - width / 2, y: y - 8, w: width, h: 16 };
+}
+
 /** Width in px of a text in the sheet's fixed-pitch face at `size` px. */
 export const textWidth = (text: string, size = 11): number => [...text].length * size * GLYPH_EM;
 

@@ -19,6 +19,8 @@ export type DimensionKey =
 /** What a dimension says: the figure as shown, how it stands to its target, and whether it can be typed here. */
 export interface DimensionText {
 	text: string;
+	/** A word under the figure: "per wheel". */
+	note?: string;
 	name: string;
 	verdict: Verdict | null;
 	editable: boolean;
@@ -48,7 +50,7 @@ export function viewDimensions(view: ViewKey, scene: ViewScene, box: Box, texts:
 	const makers: Partial<Record<DimensionKey, (room: number) => Laid | null>> =
 		view === 'front'
 			? {
-					camber: (room) => camber(scene, room),
+					camber: (room) => camber(scene, box, room),
 					kpi: (room) => steeringAngle(scene, room, 38),
 					scrubRadius: (room) => groundSpan(scene, room, outward === 1 ? -1 : 1),
 					rollCentreHeight: (room) => rollCentre(scene, room, outward),
@@ -74,7 +76,7 @@ function over(layout: DimensionLayout, [x, y]: Spot): DimensionLayout {
 	return { ...layout, text: { x, y, anchor: 'middle' } };
 }
 
-function camber(scene: ViewScene, room: number): Laid | null {
+function camber(scene: ViewScene, box: Box, room: number): Laid | null {
 	const { contact, hub, wheelLine } = scene;
 	if (!contact || !hub || wheelLine === null) return null;
 	const radius = 2 * Math.hypot(hub[0] - contact[0], hub[1] - contact[1]) + 12;
@@ -86,7 +88,7 @@ function camber(scene: ViewScene, room: number): Laid | null {
 			contact[0] + to * Math.cos(angle),
 			contact[1] + to * Math.sin(angle)
 		] as const;
-	const text: Spot = [contact[0] + radius * Math.cos((wheelLine + TO_UP) / 2), contact[1] - radius - 13];
+	const text: Spot = [contact[0] + radius * Math.cos((wheelLine + TO_UP) / 2), Math.max(box.y + 14, contact[1] - radius - 13)];
 	return { layout: over(layout, text), reference: [ray(TO_UP, radius - 8, radius + 4), ray(wheelLine, radius - 8, radius + 4)] };
 }
 
@@ -167,7 +169,7 @@ function toe(scene: ViewScene, box: Box, room: number): Laid | null {
 	const forward = wheelLine + Math.PI;
 	const down = Math.PI / 2;
 	const turned = Math.abs(Math.atan2(Math.sin(forward - down), Math.cos(forward - down)));
-	const radius = Math.max(40, Math.min(box.y + box.h - 44 - hub[1], 110));
+	const radius = Math.max(40, Math.min(box.y + box.h - 62 - hub[1], 104));
 	const layout = angularDimension({ centre: hub, radius, from: down - signed(down - forward), to: down, textWidth: room });
 	const ray = (angle: number) =>
 		[hub[0], hub[1], hub[0] + (radius + 6) * Math.cos(angle), hub[1] + (radius + 6) * Math.sin(angle)] as const;

@@ -28,6 +28,8 @@ export interface Extents {
 	/** Fore and aft reach of the points alone: what the top view must show even where the tyre is cut off. */
 	pointsFore: number;
 	pointsAft: number;
+	/** Distance of the innermost point from the centreline. */
+	inboard: number;
 	/** Height of the wheel centre at ride height. */
 	wheelCentre: number;
 }
@@ -95,6 +97,7 @@ export function extentsOf(places: Places, wheel: { centre: Vec3; tyre: TyreShape
 		aft: Math.max(pointsAft, up(tyre.radius - centre[0])),
 		pointsFore,
 		pointsAft,
+		inboard: Math.min(Math.abs(centre[1]) - tyre.width, ...points.map((p) => Math.abs(p[1]))),
 		wheelCentre: centre[2]
 	};
 }
@@ -166,7 +169,7 @@ function layoutSeveral(spec: SheetSpec): SheetLayout {
 	const sideBox = cols.side ? { ...cols.side, ...frontRow } : spec.cell === 'side' ? beside : null;
 	if (sideBox) views.side = sideWindow(sideBox, e, place(0), viewFrame('side', angle, sideAt));
 	const orbitBox = spec.mode === 'full' ? spare : spec.cell === 'orbit' ? beside : null;
-	if (orbitBox) views.orbit = orbitWindow(orbitBox, e, s, hand);
+	if (orbitBox) views.orbit = orbitWindow(orbitBox, e, hand);
 	return {
 		width,
 		height,
@@ -196,20 +199,19 @@ function sideWindow(box: Box, e: Extents, at: Placement, frame: Frame): ViewWind
 	return { box, at: { ...at, x: box.x + box.w / 2 - middle * at.pxPerMm }, frame };
 }
 
-/** The orbit view is set about the middle of the corner, at most as large as the sheet's scale allows. */
-function orbitWindow(box: Box, e: Extents, s: number, hand: Hand): ViewWindow {
-	const reach = Math.hypot(e.outboard * 0.75, e.top, e.fore + e.aft) * 0.94;
-	const fit = Math.min((box.w - 8) / reach, (box.h - CAPTION - 8) / reach, s);
+/** The orbit view fills its window: the ball about everything drawn, with a little of it cut, since no corner is a ball. */
+function orbitWindow(box: Box, e: Extents, hand: Hand): ViewWindow {
+	const across = 0.8 * Math.hypot(e.outboard - e.inboard, e.top, (e.fore + e.aft) * 0.8);
 	return {
 		box,
-		at: { x: box.x + box.w / 2, y: box.y + CAPTION + (box.h - CAPTION) / 2, pxPerMm: fit },
+		at: { x: box.x + box.w / 2, y: box.y + CAPTION + (box.h - CAPTION) / 2, pxPerMm: Math.min(box.w - 16, box.h - CAPTION - 12) / across },
 		frame: viewFrame('front', 'third', hand)
 	};
 }
 
 /** The point about which the orbit view turns (mm): the middle of what is drawn. */
 export function orbitCentre(e: Extents, hand: Hand): Vec3 {
-	const outboard = e.outboard * 0.66;
+	const outboard = (e.outboard + e.inboard) / 2;
 	return [(e.fore - e.aft) / 2, hand === 'left' ? outboard : -outboard, e.top / 2];
 }
 
@@ -235,7 +237,7 @@ function layoutSingle(spec: SheetSpec): SheetLayout {
 		views.top = { box, at: topPlacement({ y: 0, h: box.h }, e, s, centreX), frame: viewFrame('top', angle, sideAt) };
 	}
 	if (cell === 'side') views.side = sideWindow(box, e, at, viewFrame('side', angle, sideAt));
-	if (cell === 'orbit') views.orbit = orbitWindow(box, e, pxPerMm(3), hand);
+	if (cell === 'orbit') views.orbit = orbitWindow(box, e, hand);
 	return {
 		width,
 		height,

@@ -110,27 +110,30 @@ export function polyline(spots: readonly (readonly [number, number])[], closed =
 }
 
 /**
- * A coil-over in outline between two sheet points: the bar of the damper as path data, and the coil as a zigzag of
- * `turns` between its seats. Seats at 18 % and 88 % of the length; a coil never wider than a third of it.
+ * A coil-over in outline between two sheet points, body end first: the damper's rod and tube, two seats, and the near
+ * side of the coil as slanted strokes between the seats. A coil is never wider than a third of its length.
  */
 export function coilOver(
 	[x1, y1]: readonly [number, number],
 	[x2, y2]: readonly [number, number],
 	halfWidth: number,
-	turns = 7
+	turns = 8
 ): { axis: string; coil: string; seats: string } {
 	const length = Math.hypot(x2 - x1, y2 - y1);
-	if (length < 1) return { axis: '', coil: '', seats: '' };
+	if (length < 12) return { axis: '', coil: '', seats: '' };
 	const [dx, dy] = [(x2 - x1) / length, (y2 - y1) / length];
 	const half = Math.min(halfWidth, length / 6);
+	const tube = half * 0.45;
 	const at = (along: number, across: number) =>
 		[x1 + dx * along * length - dy * across, y1 + dy * along * length + dx * across] as const;
-	const [start, end] = [0.18, 0.86];
-	const coil: (readonly [number, number])[] = [];
-	for (let k = 0; k <= turns * 2; k += 1) coil.push(at(start + ((end - start) * k) / (turns * 2), k % 2 === 0 ? -half : half));
+	const [start, middle, end] = [0.14, 0.5, 0.84];
+	const pitch = (end - start) / turns;
+	let coil = '';
+	for (let k = 0; k < turns; k += 1) coil += polyline([at(start + pitch * k, -half), at(start + pitch * (k + 1), half)]);
+	const seat = (along: number) => polyline([at(along, -half - 2), at(along, half + 2)]);
 	return {
-		axis: polyline([at(0, 0), at(1, 0)]),
-		coil: polyline(coil),
-		seats: polyline([at(start, -half - 2), at(start, half + 2)]) + polyline([at(end, -half - 2), at(end, half + 2)])
+		axis: polyline([at(0, 0), at(middle, 0)]) + polyline([at(1, 0), at(0.9, 0), at(0.9, tube), at(middle, tube), at(middle, -tube), at(0.9, -tube), at(0.9, 0)]),
+		coil,
+		seats: seat(start) + seat(end)
 	};
 }
