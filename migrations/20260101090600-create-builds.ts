@@ -30,7 +30,8 @@ export const up: MigrationFn<QueryInterface> = ({ context }) =>
 			PRIMARY KEY (id),
 			UNIQUE KEY builds_shop (shop_id, id),
 			KEY builds_updated (shop_id, archived, updated_at, id),
-			KEY builds_name (shop_id, archived, name, id),
+			-- With the client at its end a search reads the index alone.
+			KEY builds_name (shop_id, archived, name, id, client),
 			KEY builds_client (shop_id, archived, client, id),
 			KEY builds_stage (shop_id, archived, stage_order, updated_at, id),
 			CONSTRAINT builds_shop_fk FOREIGN KEY (shop_id) REFERENCES shops (id)

@@ -13,7 +13,8 @@ export const up: MigrationFn<QueryInterface> = ({ context }) =>
 			released_at DATETIME(3) NOT NULL,
 			released_by CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
 			PRIMARY KEY (id),
-			UNIQUE KEY releases_revision (shop_id, build_id, revision_id),
+			UNIQUE KEY releases_revision (revision_id),
+			KEY releases_build (shop_id, build_id, revision_id),
 			KEY releases_author (released_by),
 			CONSTRAINT releases_revision_fk FOREIGN KEY (shop_id, build_id, revision_id) REFERENCES revisions (shop_id, build_id, id),
 			CONSTRAINT releases_author_fk FOREIGN KEY (released_by) REFERENCES people (id)

@@ -53,7 +53,7 @@ export async function listBuilds(actor: Actor, query: BuildListQuery): Promise<B
 
 function listWhere(actor: Actor, { q, stage, archived }: BuildListQuery): WhereOptions<Build> {
 	const parts: WhereOptions<Build>[] = [visibleBuilds(actor), { archived: archived === 'yes' }];
-	if (stage) parts.push({ stage });
+	if (stage) parts.push({ stageOrder: STAGES.indexOf(stage) });
 	if (q) {
 		const like = { [Op.like]: `%${q.replace(/[\\%_]/g, '\\$&')}%` };
 		// A technician is not told whose car it is, so may not find out by searching either.
