@@ -1,9 +1,10 @@
-import type { CornerState, SweepLimit } from '../kinematics';
+import type { CornerState } from '../kinematics';
 import type { Target } from '../schemas/axle';
 import { MINUS, formatNumber, formatQuantity, formatWithUnit, unitLabel } from '../format';
 import type { WritingChoice } from '../format';
 import type { Evaluation } from './evaluation';
 import { OUTPUTS, reasonOf } from './outputs';
+import { LINK_NAMES } from './points';
 
 export type Verdict = 'pass' | 'near' | 'miss' | 'unknown';
 
@@ -25,12 +26,6 @@ export const VERDICT_WORDS: Readonly<Record<Verdict, string>> = {
 	near: 'near',
 	miss: 'miss',
 	unknown: 'not known'
-};
-
-const LINKS: Readonly<Record<SweepLimit['locks'], string>> = {
-	lowerArm: 'lower arm',
-	upperArm: 'upper arm',
-	tieRod: 'tie rod'
 };
 
 /** Outside the band by up to this part of its width (of the limit itself, where there is one) is near. */
@@ -55,7 +50,7 @@ function bindsIn(sweep: ReturnType<Judged['over']>): string | null {
 	if (!limit) return null;
 	const sign = limit.value < 0 ? MINUS : '+';
 	const where = `${sign}${formatNumber(Math.abs(limit.value), 1, { numbers: 'point' })} mm`;
-	return `The ${LINKS[limit.locks]} binds at ${where}, within the travel of this target.`;
+	return `The ${LINK_NAMES[limit.locks]} binds at ${where}, within the travel of this target.`;
 }
 
 /** The figure of every state, or the first reason for which one is absent. */
