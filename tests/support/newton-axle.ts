@@ -4,7 +4,9 @@
  */
 import {
 	add,
+	asSolved,
 	contactOf,
+	continues,
 	dot,
 	linkage,
 	linkRows,
@@ -27,7 +29,7 @@ import {
 	type Solved,
 	type V3
 } from './newton';
-import { attitude, type Attitude } from './newton-figures';
+import { attitude, materialVelocity, type Attitude } from './newton-figures';
 
 export interface Sided<T> {
 	left: T;
@@ -69,20 +71,64 @@ function rollRows(links: Linkage[], poses: Pose[], up: V3, heave: number) {
 	return [...rows, join('mean', heave), join('level', 0)];
 }
 
+interface Posed {
+	links: Linkage[];
+	poses: Pose[];
+}
+
+/** Follows both uprights from level to a roll and heave in steps that shrink; how far it came, 1 being all the way. */
+function followRoll(axle: Sided<Corner>, roll: number, heave: number, smallest: number): Posed & { reached: number } {
+	const links = [linkage(axle.left), linkage(axle.right)];
+	let here = links.map((link) => solveNear(link, { point: 'hub', z: rideHub(link) }, ridePose(link)) as Solved);
+	const hubs = here.map((s) => s.signs[0]);
+	let u = 0;
+	let step = Math.min(1, 1 / Math.max(1, Math.abs(roll), Math.abs(heave) / 8));
+	while (u < 1) {
+		const next = Math.min(1, u + step);
+		const up = groundNormal(roll * next);
+		const done = settle(
+			here.map((s) => s.pose),
+			(now) => rollRows(links, now, up, heave * next)
+		);
+		const solved =
+			done && links.map((link, i) => asSolved(link, here[i]?.pose, done.first[i], done.poses[i], done.sign));
+		if (solved && smooth(solved, u === 0 ? null : here) && forward(links, solved, hubs)) {
+			[here, u] = [solved, next];
+			step *= 1.5;
+		} else {
+			step = (next - u) / 2;
+			if (step < smallest) break;
+		}
+	}
+	return { links, poses: here.map((s) => s.pose), reached: u };
+}
+
+/** Whether a step went near where its tangent pointed, and, after the first, kept the way of assembly. */
+const smooth = (next: Solved[], before: Solved[] | null): boolean =>
+	next.every((s, i) => (before ? continues(s, before[i] as Solved) : s.bend < 0.35));
+
+/** Whether no wheel has gone over its own dead point: its linkage still answers to travel as it did at ride height. */
+function forward(links: Linkage[], solved: Solved[], hubs: number[]): boolean {
+	return links.every((link, i) => {
+		const pose = solved[i]?.pose as Pose;
+		const own = solveNear(link, { point: 'hub', z: place(pose, link.hub)[2] }, pose);
+		return own?.signs[0] === hubs[i];
+	});
+}
+
 /** The two uprights when the body rolls (degrees) at a heave (mm of mean wheel travel); null where it binds. */
 export function solveRoll(axle: Sided<Corner>, roll: number, heave = 0): Rolled | null {
-	const links = [linkage(axle.left), linkage(axle.right)];
-	let poses = links.map(ridePose);
-	const parts = Math.max(4, Math.ceil(Math.abs(roll) / 0.5), Math.ceil(Math.abs(heave) / 8));
-	for (let i = 1; i <= parts; i++) {
-		const up = groundNormal((roll * i) / parts);
-		const done = settle(poses, (now) => rollRows(links, now, up, (heave * i) / parts));
-		if (!done) return null;
-		poses = done.poses;
-	}
+	const { links, poses, reached } = followRoll(axle, roll, heave, 1e-6);
+	if (reached < 1) return null;
 	const up = groundNormal(roll);
 	const [left, right] = links.map((link, i) => rolledWheel(link, poses[i] as Pose, up)) as [RolledWheel, RolledWheel];
 	return { left, right, rollCentre: rollCentre(links, poses, up, roll) };
+}
+
+/** The roll (degrees, signed) at which one side or the pair binds on the way to `to`, or null when `to` is reached. */
+export function rollLimit(axle: Sided<Corner>, to: number): number | null {
+	const { reached } = followRoll(axle, to, 0, 1e-11);
+	return reached < 1 ? reached * to : null;
 }
 
 function rolledWheel(link: Linkage, pose: Pose, up: V3): RolledWheel {
@@ -98,30 +144,14 @@ function rolledWheel(link: Linkage, pose: Pose, up: V3): RolledWheel {
 	};
 }
 
-/** Velocity over travel of the upright's material point at `point`, by central differences of the solved positions. */
-export function materialVelocity(link: Linkage, pose: Pose, point: V3): V3 | null {
-	const [w, x, y, z] = pose.q;
-	const local = turn([w, -x, -y, -z], sub(point, pose.t));
-	const height = place(pose, link.hub)[2];
-	const at = (h: number): V3 | null => {
-		const next = solveNear(link, { point: 'hub', z: height + h }, pose);
-		return next && place(next.pose, local);
-	};
-	const weights = [4 / 5, -1 / 5, 4 / 105, -1 / 280];
-	let sum: V3 = [0, 0, 0];
-	for (const [i, weight] of weights.entries()) {
-		const plus = at((i + 1) * 0.5);
-		const minus = at(-(i + 1) * 0.5);
-		if (!plus || !minus) return null;
-		sum = add(sum, scale(sub(plus, minus), weight / 0.5));
-	}
-	return sum;
-}
-
 /** Where the front-view normals to the two contact points' paths meet, against the ground line. */
 function rollCentre(links: Linkage[], poses: Pose[], up: V3, roll: number): { height: number; lateral: number } | null {
 	const feet = links.map((link, i) => contactOf(link, poses[i] as Pose, up)) as [V3, V3];
-	const paths = links.map((link, i) => materialVelocity(link, poses[i] as Pose, feet[i] as V3));
+	const paths = links.map((link, i) => {
+		const pose = poses[i] as Pose;
+		const own = solveNear(link, { point: 'hub', z: place(pose, link.hub)[2] }, pose);
+		return own && materialVelocity(link, own, feet[i] as V3);
+	});
 	const [a, b] = paths;
 	if (!a || !b) return null;
 	// A point P of the normal of wheel i satisfies (P - foot) . velocity = 0 in the y-z plane.

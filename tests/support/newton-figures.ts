@@ -313,6 +313,13 @@ export function figuresAt(link: Linkage, at: Solved, travel: number): Outside | 
 	};
 }
 
+/** Velocity over travel of the upright's material point at `point`; null within 1 mm of a bind. */
+export function materialVelocity(link: Linkage, at: Solved, point: V3): V3 | null {
+	const travel = place(at.pose, link.hub)[2] - rideHub(link);
+	const d = rates(link, at, travel, unturn(at.pose, sub(point, at.pose.t)));
+	return d && [d.first[4] ?? NaN, d.first[5] ?? NaN, d.first[6] ?? NaN];
+}
+
 /** A direction in body axes, seen from the upright. */
 function unturn(pose: Pose, v: V3): V3 {
 	const [w, x, y, z] = pose.q;

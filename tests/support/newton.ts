@@ -293,10 +293,19 @@ export function solveNear(link: Linkage, closing: Closing, from: Pose): Solved |
 		const point = closing.point === 'hub' ? place(here, link.hub) : contactOf(link, here);
 		return [...linkRows(link, here), pointRow(here, point, VERTICAL, point[2] - closing.z)];
 	});
-	const pose = done?.poses[0];
-	const first = done?.first[0];
-	if (!done || !pose || !first) return null;
-	return { pose, signs: signsOf(link, pose, done.sign), bend: bendOf(link, from, first, pose) };
+	return done && asSolved(link, from, done.first[0], done.poses[0], done.sign);
+}
+
+/** A body's part of a settled system, with its signs and how straight the way there was. */
+export function asSolved(
+	link: Linkage,
+	from: Pose | undefined,
+	first: Pose | undefined,
+	last: Pose | undefined,
+	sign: number
+): Solved {
+	if (!from || !first || !last) throw new Error('One pose a body is expected.');
+	return { pose: last, signs: signsOf(link, last, sign), bend: bendOf(link, from, first, last) };
 }
 
 /** Largest distance of a link end or the hub between two poses, mm. */

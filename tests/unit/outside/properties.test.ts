@@ -339,12 +339,12 @@ describe('reach', () => {
 						continue;
 					}
 					limits++;
-					near(limit.value, outside ?? NaN, 1e-4, 'limit');
+					near(limit.value, outside ?? NaN, 1e-6, 'limit');
 					expect(String(limit.locks).length).toBeGreaterThan(2);
 					expect(notFinite(solveCorner(corner, { travel: limit.value, rack: 0 }))).toEqual([]);
-					const past = attempt(() => solveCorner(corner, { travel: limit.value + 1e-3 * way, rack: 0 }));
+					const past = attempt(() => solveCorner(corner, { travel: limit.value + 1e-5 * way, rack: 0 }));
 					expect(failed(past) && past.code).toBe('out-of-reach');
-					if (failed(past)) near(past.lastReachable ?? NaN, limit.value, 1e-4, 'last reachable');
+					if (failed(past)) near(past.lastReachable ?? NaN, limit.value, 1e-6, 'last reachable');
 				}
 				// Every step inside is there.
 				const low = swept.lowLimit?.value ?? -250;

@@ -4,7 +4,7 @@ import { solveCorner, sweepRoll, sweepSteer } from '../../../src/lib/kinematics'
 import { lowCorner, roadCorner } from '../../fixtures/corners';
 import { cornerArbitrary, real } from '../../support/corners';
 import { diskUp, dot, mirrored, rackLimit, RAD, scale, sub, type Corner, type V3 } from '../../support/newton';
-import { ackermann, groundNormal, solveRoll, solveSteer, type Sided } from '../../support/newton-axle';
+import { ackermann, groundNormal, rollLimit, solveRoll, solveSteer, type Sided } from '../../support/newton-axle';
 import { runs, SEED } from '../../support/seed';
 
 console.log(`outside roll and steer: FC_SEED=${SEED}`);
@@ -82,6 +82,30 @@ describe('roll', () => {
 			near(single.rollCentreHeight ?? NaN, state?.rollCentre?.height ?? NaN, 1e-6, 'height');
 			near(0, state?.rollCentre?.lateral ?? NaN, 1e-6, 'lateral');
 		}
+	});
+
+	it('stops where the axle binds; the last roll can be asked for', () => {
+		let limits = 0;
+		fc.assert(
+			fc.property(axleArbitrary, ({ axle }) => {
+				const swept = sweepRoll(axle, { from: -15, to: 15, step: 1 });
+				for (const [limit, way] of [
+					[swept.lowLimit, -1],
+					[swept.highLimit, 1]
+				] as const) {
+					const outside = rollLimit(axle, 15 * way);
+					if (!limit) {
+						expect(outside === null || Math.abs(outside) > 14.999, `no limit, but bound at ${outside}`).toBe(true);
+						continue;
+					}
+					limits++;
+					near(outside ?? NaN, limit.value, 1e-5, 'limit');
+					expect(sweepRoll(axle, { from: limit.value, to: limit.value, step: 1 }).states.length).toBe(1);
+				}
+			}),
+			runs(120)
+		);
+		expect(limits).toBeGreaterThan(60);
 	});
 
 	it('a mirrored car rolls to the left as it rolls to the right', () => {
