@@ -76,13 +76,23 @@ export interface PasteResult {
 const LONGEST = 100_000;
 const MOST_ROWS = 400;
 
+/** Lines that end in three numbers parted by spaces: their commas are decimal signs, not what parts the cells. */
+function isSpaced(body: string): boolean {
+	const lines = body.split('\n').filter((line) => line.trim() !== '');
+	const ending = lines.filter((line) =>
+		/(?:^|\s)(?:[-+−–]?\d+(?:[.,]\d+)?\s+){2}[-+−–]?\d+(?:[.,]\d+)?\s*$/.test(line)
+	);
+	return ending.length > lines.length / 2;
+}
+
 /** The cells of a pasted text: parted by tabs, semicolons or commas, else by spaces. An empty line keeps its number. */
 function cellsOf(text: string): string[][] {
 	const body = text
 		.replace(/^\ufeff/, '')
 		.replace(/\r\n?/g, '\n')
 		.replace(/\s+$/, '');
-	const delimiter = ['\t', ';'].find((sign) => body.includes(sign)) ?? (/,.*,/.test(body) ? ',' : undefined);
+	const sign = ['\t', ';'].find((one) => body.includes(one));
+	const delimiter = sign ?? (/,.*,/.test(body) && !isSpaced(body) ? ',' : undefined);
 	if (delimiter) {
 		const { data } = Papa.parse<string[]>(body, { delimiter, skipEmptyLines: false });
 		return data.map((row) => row.map((cell) => cell.trim()));
@@ -174,10 +184,10 @@ function readRows(body: { cells: string[]; line: number }[], reading: Reading): 
 
 const DECIMAL_QUESTION: PasteQuestion = {
 	about: 'decimal',
-	message: 'Is the comma in these numbers a decimal sign, or does it part thousands?',
+	message: 'Which is the decimal sign in this list? Its numbers can be read either way.',
 	choices: [
-		{ value: 'comma', label: 'Decimal comma: 12,375 is twelve and three eighths' },
-		{ value: 'point', label: 'Decimal point: 12,375 is twelve thousand' }
+		{ value: 'point', label: 'Point: 12.375 is twelve and three eighths' },
+		{ value: 'comma', label: 'Comma: 12,375 is twelve and three eighths' }
 	]
 };
 
@@ -300,7 +310,7 @@ export function pointsToCsv(
 ): string {
 	const unit = preferences.length;
 	const units = { length: unit, angle: 'decimal', force: 'N' } as const;
-	const number = (mm: number | null) => (mm === null ? null : Math.round(toDisplay(mm, 'length', units) * 1e6) / 1e6);
+	const number = (mm: number | null) => (mm === null ? null : Math.round(toDisplay(mm, 'length', units) * 1e9) / 1e9);
 	const rows: CsvCell[][] = [['point', ...DATUM_AXES.map((axis) => `${axisWord(axis, datum)} ${unit}`)]];
 	const sides = document.right === 'mirror' ? (['left'] as const) : (['left', 'right'] as const);
 	for (const side of sides) {
