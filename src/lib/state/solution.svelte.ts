@@ -1,4 +1,4 @@
-import { evaluate, figureLines, type Evaluation } from '$lib/domain/evaluation';
+import { evaluate, type Evaluation } from '$lib/domain/evaluation';
 import {
 	KinematicsError,
 	solveCorner,
@@ -12,8 +12,8 @@ import { createContext } from 'svelte';
 import type { DraftEditor } from './draft.svelte';
 import type { Selection } from './selection.svelte';
 
-/** A corner that could be solved: at ride height, over the whole range, its targets judged. */
-export type Solved = Evaluation & { geometry: CornerGeometry };
+/** A corner that could be solved: its figures at ride height, its curves, its targets judged. */
+export type Solved = Evaluation;
 
 interface Attempt {
 	solved: Solved | null;
@@ -45,22 +45,17 @@ export class Solution {
 	readonly corner = $derived.by<CornerGeometry | null>(() => {
 		const geometry = this.#editor.geometry;
 		if (!geometry) return null;
-		return this.#selection.side === 'right' && 'right' in geometry.axle ? geometry.axle.right : geometry.left;
+		const { axle, left } = geometry;
+		return this.#selection.side === 'right' && 'right' in axle ? axle.right : left;
 	});
 
 	readonly #attempt = $derived.by<Attempt>(() => {
 		const { corner, range } = this;
 		if (!corner) return { solved: null, error: null };
-		const { value, error } = attempt<Solved>(() => ({
-			geometry: corner,
-			...evaluate(corner, this.#editor.document.targets, range)
-		}));
+		const { value, error } = attempt(() => evaluate(corner, this.#editor.document.targets, range));
 		if (value) this.#last = value;
 		return { solved: value, error };
 	});
-
-	/** The list of figures at ride height, each with its targets; empty without a ride state. */
-	readonly figures = $derived.by(() => (this.#attempt.solved ? figureLines(this.#attempt.solved) : []));
 
 	readonly #atTravel = $derived.by(() => {
 		const { solved } = this.#attempt;
@@ -96,6 +91,11 @@ export class Solution {
 	/** The curves. */
 	get sweep(): Sweep<CornerState> | null {
 		return this.#attempt.solved?.sweep ?? null;
+	}
+
+	/** Every figure at ride height in stored units; null without a ride state. */
+	get figures(): Solved['figures'] | null {
+		return this.#attempt.solved?.figures ?? null;
 	}
 
 	/** The targets of the document with what was reached and the verdict, in their order; empty without a ride state. */

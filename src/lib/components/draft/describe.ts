@@ -1,7 +1,7 @@
 import { axisWord, DATUM_AXES, GROUND_DATUM, toDatum, type Datum, type Side } from '$lib/domain/datum';
 import { fieldOf } from '$lib/domain/fields';
-import { OUTPUTS } from '$lib/domain/outputs';
 import { POINTS, type PointKey } from '$lib/domain/points';
+import { targetInWords } from '$lib/domain/targets';
 import { formatNumber, formatQuantity, formatWithUnit, NONE } from '$lib/format';
 import type { PointEntry, Target } from '$lib/schemas/axle';
 import type { Preferences } from '$lib/schemas/preferences';
@@ -47,18 +47,6 @@ function pointText(entry: PointEntry, preferences: Preferences, datum: Datum, si
 	).join('  ');
 }
 
-function targetText(target: Target, preferences: Preferences): string {
-	const { short, quantity } = OUTPUTS[target.figure];
-	const where =
-		target.at === 'ride'
-			? ''
-			: ` over ${formatQuantity(target.from, 'length', preferences)} to ${formatWithUnit(target.to, 'length', preferences)}`;
-	const bounds = [target.low, target.high].map((bound) =>
-		bound === null ? 'any' : formatQuantity(bound, quantity, preferences)
-	);
-	return `${short} ${bounds.join(' to ')}${where}`;
-}
-
 /** A value of the document as the person reads it: points in the builder's datum, numbers in their units. */
 export function describeValue(
 	path: Path,
@@ -72,7 +60,7 @@ export function describeValue(
 	if (path[0] === 'targets' && Array.isArray(value)) {
 		return value.length === 0
 			? 'none'
-			: (value as Target[]).map((target) => targetText(target, preferences)).join('; ');
+			: (value as Target[]).map((target) => targetInWords(target, preferences)).join('; ');
 	}
 	const quantity = fieldOf(path.join('.'))?.quantity;
 	if (typeof value === 'number') {
