@@ -8,6 +8,9 @@ export interface PackSide {
 	readonly along: (front: number) => (rear: number) => number;
 	/** The miss changes by at most this much per mm of rear pack. */
 	readonly steepness: number;
+	/** Packs that can be judged at all, mm; any where absent. */
+	readonly front?: readonly [number, number];
+	readonly rear?: readonly [number, number];
 }
 
 export interface PackLimits {
@@ -141,10 +144,15 @@ function scan(
 	reach: () => number,
 	visit: (level: number, front: number, rear: number) => void
 ): void {
+	const [leastFront, mostFront] = side.front ?? [0, Infinity];
+	const [leastRear, mostRear] = side.rear ?? [0, Infinity];
 	for (const front of sums) {
-		const missAt = side.along(front * shelf.unit);
-		const last = front * shelf.unit + limits.maxDifference + ROUNDING;
-		let index = firstFrom(sums, (front * shelf.unit - limits.maxDifference - ROUNDING) / shelf.unit);
+		const thickness = front * shelf.unit;
+		if (thickness < leastFront - ROUNDING || thickness > mostFront + ROUNDING) continue;
+		const missAt = side.along(thickness);
+		const first = Math.max(leastRear, thickness - limits.maxDifference) - ROUNDING;
+		const last = Math.min(mostRear, thickness + limits.maxDifference) + ROUNDING;
+		let index = firstFrom(sums, first / shelf.unit);
 		for (let rear = sums[index]; rear !== undefined && rear * shelf.unit <= last; rear = sums[index]) {
 			const level = Math.round(missAt(rear * shelf.unit) * LEVEL);
 			if (level <= reach()) {
