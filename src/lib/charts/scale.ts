@@ -10,6 +10,8 @@ export interface Series {
 	seriesIndex: number;
 	/** A dash of its own, where the list's does not serve. */
 	dash?: string;
+	/** Where this one binds, where it is another place than the group's. */
+	limits?: { low: Limit | null; high: Limit | null };
 }
 
 export interface CurvePoint {

@@ -1,4 +1,4 @@
-import { angularDimension, linearDimension, textWidth, type DimensionLayout, type Spot } from './dimension';
+import { angularDimension, linearDimension, textBox, textWidth, type DimensionLayout, type Spot } from './dimension';
 import type { Box } from './layout';
 import type { ViewKey } from './projection';
 import type { ViewScene } from './scene';
@@ -38,6 +38,8 @@ type Laid = Pick<PlacedDimension, 'layout' | 'reference'>;
 
 const ROW_ONE = 30;
 const ROW_TWO = 54;
+/** Dimensions keep clear of the window's lower edge, where a hair cross has its figure. */
+const EDGE = 24;
 const TO_UP = -Math.PI / 2;
 
 const roomFor = (said: DimensionText): number => textWidth(said.text) + (said.verdict ? VERDICT_ROOM : 0);
@@ -52,13 +54,13 @@ export function viewDimensions(view: ViewKey, scene: ViewScene, box: Box, texts:
 			? {
 					camber: (room) => camber(scene, box, room),
 					kpi: (room) => steeringAngle(scene, room, 38),
-					scrubRadius: (room) => groundSpan(scene, room, outward === 1 ? -1 : 1),
+					scrubRadius: (room) => groundSpan(scene, box, room, outward === 1 ? -1 : 1),
 					rollCentreHeight: (room) => rollCentre(scene, room, outward),
 					loadedRadius: (room) => loadedRadius(scene, room, outward),
-					track: (room) => track(scene, room, outward)
+					track: (room) => track(scene, box, room, outward)
 				}
 			: view === 'side'
-				? { caster: (room) => steeringAngle(scene, room, 44), mechanicalTrail: (room) => groundSpan(scene, room, 1) }
+				? { caster: (room) => steeringAngle(scene, room, 44), mechanicalTrail: (room) => groundSpan(scene, box, room, 1) }
 				: view === 'top'
 					? { toe: (room) => toe(scene, box, room) }
 					: {};
@@ -88,7 +90,9 @@ function camber(scene: ViewScene, box: Box, room: number): Laid | null {
 			contact[0] + to * Math.cos(angle),
 			contact[1] + to * Math.sin(angle)
 		] as const;
-	const text: Spot = [contact[0] + radius * Math.cos((wheelLine + TO_UP) / 2), Math.max(box.y + 14, contact[1] - radius - 13)];
+	const above = contact[1] - radius - 13;
+	// With no room over the tyre (the wheel is up in bump) the figure stands inside its outline.
+	const text: Spot = [contact[0] + radius * Math.cos((wheelLine + TO_UP) / 2), above < box.y + 14 ? contact[1] - radius + 34 : above];
 	return { layout: over(layout, text), reference: [ray(TO_UP, radius - 8, radius + 4), ray(wheelLine, radius - 8, radius + 4)] };
 }
 
@@ -97,12 +101,20 @@ function steeringAngle(scene: ViewScene, room: number, above: number): Laid | nu
 	const { axis, axisFoot } = scene;
 	if (!axis || !axisFoot) return null;
 	const angle = Math.atan2(axis[3] - axis[1], axis[2] - axis[0]);
-	const radius = Math.hypot(axis[2] - axis[0], axis[3] - axis[1]) + above - 26;
-	const layout = angularDimension({ centre: axisFoot, radius, from: angle, to: TO_UP, textWidth: room, side: 'from' });
+	const upper = Math.hypot(axis[2] - axis[0], axis[3] - axis[1]) - 26;
+	const lay = (radius: number) =>
+		angularDimension({ centre: axisFoot, radius, from: angle, to: TO_UP, textWidth: room, side: 'from' });
+	// The figure keeps clear of marks: the arc is raised or lowered until it does.
+	const clear = (layout: DimensionLayout) => {
+		const { x, y, w, h } = textBox(layout, room);
+		return scene.marks.every((mark) => mark.x < x - 9 || mark.x > x + w + 9 || mark.y < y - 6 || mark.y > y + h + 6);
+	};
+	const radii = [above, above + 14, above - 14, above + 28].map((more) => upper + more);
+	const radius = radii.find((one) => clear(lay(one))) ?? upper + above;
 	const end = radius + 5;
 	const tip: Spot = [axisFoot[0] + end * Math.cos(angle), axisFoot[1] + end * Math.sin(angle)];
 	return {
-		layout,
+		layout: lay(radius),
 		reference: [
 			[axisFoot[0], axisFoot[1], axisFoot[0], axisFoot[1] - end],
 			[axis[2], axis[3], tip[0], tip[1]]
@@ -111,13 +123,13 @@ function steeringAngle(scene: ViewScene, room: number, above: number): Laid | nu
 }
 
 /** Scrub radius (front) or trail (side): along the ground from the axis's foot to the contact point. */
-function groundSpan(scene: ViewScene, room: number, side: 1 | -1): Laid | null {
+function groundSpan(scene: ViewScene, box: Box, room: number, side: 1 | -1): Laid | null {
 	const { contact, axisFoot, groundY } = scene;
 	if (!contact || !axisFoot || groundY === null) return null;
-	return {
-		layout: linearDimension({ from: axisFoot, to: contact, run: 'level', at: groundY + ROW_ONE, textWidth: room, side }),
-		reference: []
-	};
+	// Where the window ends close under the ground the dimension stands over it.
+	const under = groundY + ROW_ONE <= box.y + box.h - EDGE / 2;
+	const at = under ? groundY + ROW_ONE : groundY - ROW_ONE / 2;
+	return { layout: linearDimension({ from: axisFoot, to: contact, run: 'level', at, textWidth: room, side }), reference: [] };
 }
 
 function rollCentre(scene: ViewScene, room: number, outward: 1 | -1): Laid | null {
@@ -137,10 +149,12 @@ function loadedRadius(scene: ViewScene, room: number, outward: 1 | -1): Laid | n
 }
 
 /** The whole track on a half drawing: one arrow at the contact point, the line run past the centreline as usual for a symmetrical part. */
-function track(scene: ViewScene, room: number, outward: 1 | -1): Laid | null {
+function track(scene: ViewScene, box: Box, room: number, outward: 1 | -1): Laid | null {
 	const { contact, groundY, centreX } = scene;
 	if (!contact || groundY === null || centreX === null) return null;
 	const at = groundY + ROW_TWO;
+	// In droop the ground comes down the page: the second row steps aside for the window's edge.
+	if (at > box.y + box.h - EDGE) return null;
 	const middle = (contact[0] + centreX) / 2;
 	const past = centreX - outward * 18;
 	const half = room / 2 + 4;
@@ -169,7 +183,8 @@ function toe(scene: ViewScene, box: Box, room: number): Laid | null {
 	const forward = wheelLine + Math.PI;
 	const down = Math.PI / 2;
 	const turned = Math.abs(Math.atan2(Math.sin(forward - down), Math.cos(forward - down)));
-	const radius = Math.max(40, Math.min(box.y + box.h - 62 - hub[1], 104));
+	const within = (scene.wheelRadius ?? 150) - 46;
+	const radius = Math.max(36, Math.min(box.y + box.h - 62 - hub[1], within, 104));
 	const layout = angularDimension({ centre: hub, radius, from: down - signed(down - forward), to: down, textWidth: room });
 	const ray = (angle: number) =>
 		[hub[0], hub[1], hub[0] + (radius + 6) * Math.cos(angle), hub[1] + (radius + 6) * Math.sin(angle)] as const;

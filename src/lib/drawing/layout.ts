@@ -68,9 +68,11 @@ export interface SheetLayout {
 const MARGIN = 16;
 const CAPTION = 28;
 const TITLE = 84;
+/** The acts of the sheet stand in one line along its lower edge. */
+const TOOLBAR = 30;
 /** Room under the ground line for two rows of dimensions; more where the title block stands below. */
 const UNDER_GROUND = 66;
-const ABOVE_TYRE = 46;
+const ABOVE_TYRE = 60;
 const SIDE_PAD = 18;
 const CENTRELINE_PAD = 44;
 /** Between tyre and curves: the leader from the wheel to the travel slide runs here. */
@@ -133,7 +135,7 @@ function columns(spec: SheetSpec, s: number): Columns {
 /** Whether a sheet of several views fits at s pixels a mm. */
 function fitsSheet(spec: SheetSpec, s: number): boolean {
 	const { extents: e, height } = spec;
-	const tall = 2 * MARGIN + CAPTION + topNeed(e) * s + ABOVE_TYRE + e.top * s + (spec.angle === 'third' ? TITLE + 20 : UNDER_GROUND);
+	const tall = 2 * MARGIN + topNeed(e) * s + ABOVE_TYRE + e.top * s + (spec.angle === 'third' ? TITLE + 20 : UNDER_GROUND);
 	const cell = spec.mode === 'narrow' && spec.cell === 'side' ? (e.fore + e.aft) * s : 0;
 	return columns(spec, s).beside.w >= Math.max(CHARTS_LEAST, cell) && tall <= height;
 }
@@ -152,11 +154,11 @@ function layoutSeveral(spec: SheetSpec): SheetLayout {
 	const rise = ABOVE_TYRE + e.top * s;
 	const groundY = third ? height - MARGIN - TITLE - 20 : MARGIN + rise;
 	const frontRow = third
-		? { y: groundY - rise, h: height - groundY + rise - MARGIN / 2 }
+		? { y: groundY - rise, h: height - groundY + rise - TOOLBAR }
 		: { y: MARGIN / 2, h: groundY + UNDER_GROUND - MARGIN / 2 };
 	const topRow = third
 		? { y: MARGIN / 2, h: frontRow.y - MARGIN / 2 }
-		: { y: frontRow.y + frontRow.h, h: height - frontRow.y - frontRow.h - MARGIN / 2 };
+		: { y: frontRow.y + frontRow.h, h: height - frontRow.y - frontRow.h - TOOLBAR };
 	const title: Box = { x: cols.beside.x, y: height - MARGIN - TITLE, w: cols.beside.w, h: TITLE };
 	const sideAt: Hand = spec.mode === 'full' ? (hand === 'left' ? 'left' : 'right') : hand === 'left' ? 'right' : 'left';
 	const beside: Box = { ...cols.beside, y: frontRow.y, h: third ? title.y - frontRow.y - 4 : frontRow.h };
@@ -187,7 +189,7 @@ function layoutSeveral(spec: SheetSpec): SheetLayout {
 
 /** The top view centred on the wheel, moved only so far as the points need to stay inside. */
 function topPlacement(row: { y: number; h: number }, e: Extents, s: number, x: number): Placement {
-	const [first, last] = [row.y + CAPTION, row.y + row.h - 8];
+	const [first, last] = [row.y + 4, row.y + row.h - 4];
 	const middle = (first + last) / 2 - ((e.fore - e.aft) / 2) * s;
 	const lowest = first + (e.pointsAft + 30) * s;
 	const highest = last - (e.pointsFore + 30) * s;
@@ -247,7 +249,7 @@ function layoutSingle(spec: SheetSpec): SheetLayout {
 		views,
 		charts: cell === 'curves' ? box : null,
 		figures: null,
-		title: { x: width < 560 ? 0 : MARGIN, y: height - titleH, w: width < 560 ? width : width - 2 * MARGIN, h: titleH },
+		title: { x: MARGIN, y: height - titleH, w: width - 2 * MARGIN, h: Math.max(0, titleH - 8) },
 		sideAt,
 		angle
 	};

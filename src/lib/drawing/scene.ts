@@ -34,6 +34,8 @@ export interface ViewScene {
 	groundY: number | null;
 	/** Page x of the car's centreline where the view shows it. */
 	centreX: number | null;
+	/** Loaded radius in sheet pixels. */
+	wheelRadius: number | null;
 	/** The wheel plane's line through the hub as a page direction (radians, y down, toward the top or front). */
 	wheelLine: number | null;
 }
@@ -47,10 +49,20 @@ export interface Eye {
 
 const PAST_UPPER = 26;
 
+/** Where a view's body origin falls: its placement, less the place about which the eye is set. */
+function placementOf(eye: Eye, at: ViewWindow['at']): ViewWindow['at'] {
+	const shift = eye.about ? project(eye.frame, eye.about) : ([0, 0] as const);
+	return { ...at, x: at.x - shift[0] * at.pxPerMm, y: at.y + shift[1] * at.pxPerMm };
+}
+
+/** Sheet pixels of a body point in a view. */
+export function spotIn(eye: Eye, at: ViewWindow['at'], point: Vec3): Spot {
+	return toSheet(placementOf(eye, at), project(eye.frame, point));
+}
+
 /** Lays a corner out in one window. Pure: the same corner and window always give the same scene. */
 export function viewScene(eye: Eye, at: ViewWindow['at'], corner: DrawnCorner): ViewScene {
-	const shift = eye.about ? project(eye.frame, eye.about) : ([0, 0] as const);
-	const placement = { ...at, x: at.x - shift[0] * at.pxPerMm, y: at.y + shift[1] * at.pxPerMm };
+	const placement = placementOf(eye, at);
 	const spot = (point: Vec3): Spot => toSheet(placement, project(eye.frame, point));
 	const { places, wheel } = corner;
 	const [lower, upper] = [places.lowerBall, places.upperBall];
@@ -73,6 +85,7 @@ export function viewScene(eye: Eye, at: ViewWindow['at'], corner: DrawnCorner): 
 		rollCentreByArms: corner.rollCentreByArms === null || eye.key !== 'front' ? null : spot([0, 0, groundZ + corner.rollCentreByArms]),
 		groundY: level ? spot([0, 0, groundZ])[1] : null,
 		centreX: eye.key === 'front' || eye.key === 'top' ? spot([0, 0, 0])[0] : null,
+		wheelRadius: wheel && wheel.tyre.radius * placement.pxPerMm,
 		wheelLine: wheel ? wheelLine(eye.frame, wheel.spin) : null
 	};
 }

@@ -60,11 +60,11 @@ function spanText(target: Target, preferences: Preferences): string {
 	return `${shown(target.from)}…${target.to > 0 ? '+' : ''}${shown(target.to)}`;
 }
 
-/** A band in words: "−1.00 to −0.50", "at least 3.00", "at most 0.10". */
+/** A band in words: "−1.00…−0.50", "at least 3.00", "at most 0.10". */
 export function bandText({ low, high, figure }: Target, preferences: Preferences): string {
 	const { quantity } = OUTPUTS[figure];
 	const shown = (value: number) => formatQuantity(value, quantity, preferences);
-	if (low !== null && high !== null) return low === -high ? `±${shown(high)}` : `${shown(low)} to ${shown(high)}`;
+	if (low !== null && high !== null) return low === -high ? `±${shown(high)}` : `${shown(low)}…${shown(high)}`;
 	return low !== null ? `at least ${shown(low)}` : high !== null ? `at most ${shown(high)}` : NONE;
 }
 

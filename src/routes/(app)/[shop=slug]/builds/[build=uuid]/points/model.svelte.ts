@@ -1,10 +1,10 @@
-import { layCharts, AXIS_ROOM } from '$lib/charts/multiples';
+import { AXIS_ROOM, layCharts, type ChartSpec } from '$lib/charts/multiples';
 import { linear } from '$lib/charts/scale';
 import { axleGeometry, rightCorner } from '$lib/domain/axle';
 import { OUTPUTS } from '$lib/domain/outputs';
 import { POINTS } from '$lib/domain/points';
 import type { DimensionKey, DimensionText } from '$lib/drawing/figures';
-import type { SheetMode, SheetSpec } from '$lib/drawing/layout';
+import type { SheetMode, SheetSpec, SideCell } from '$lib/drawing/layout';
 import type { MarkKey, MarkKind } from '$lib/drawing/linkage';
 import type { Hand } from '$lib/drawing/projection';
 import type { DrawnCorner } from '$lib/drawing/scene';
@@ -84,6 +84,8 @@ function tryState(geometry: CornerGeometry, travel: number): CornerState | null 
 
 const CHARTS_HEAD = 58;
 const CHARTS_FOOT = 26;
+/** Over the curves stands the switch of what is shown there. */
+const SWITCH_ROOM = 20;
 const LEADER_ROOM = 10;
 
 /** Everything the Points page shows, from the editor, the solution and the selection. */
@@ -94,8 +96,10 @@ export class PointsModel {
 	measuring = $state(false);
 	/** Whether the previous revision lies under the drawing. */
 	ghosted = $state(true);
-	/** What stands beside the front view where not everything has room, or alone on a narrow screen. */
-	cell = $state<SheetSpec['cell']>('curves');
+	/** What stands beside the front view where not everything has room. */
+	beside = $state<SideCell>('curves');
+	/** What is shown alone on a narrow screen. */
+	alone = $state<SheetSpec['cell']>('front');
 	/** The dimension being typed. */
 	typing = $state<DimensionKey | null>(null);
 	/** Where the point came from while it is dragged, mm. */
@@ -118,7 +122,7 @@ export class PointsModel {
 				return model.hand;
 			},
 			get cell() {
-				return model.cell;
+				return source.mode === 'single' ? model.alone : model.beside;
 			},
 			get corner() {
 				return model.corner;
@@ -259,27 +263,34 @@ export class PointsModel {
 		return travelSpec(this.state?.travel ?? 0, solution.range, solution.sweep, preferences);
 	});
 
+	readonly #curved: Curved[] = $derived.by(() => {
+		const { solution } = this.#source;
+		const curved: Curved[] = [];
+		if (this.state && solution.ride && solution.sweep) {
+			curved.push({ label: this.name, ride: solution.ride, sweep: solution.sweep });
+		}
+		if (this.ghosted && this.#previous && curved.length) {
+			curved.push({ label: this.#previous.letter, ride: this.#previous.ride, sweep: this.#previous.sweep });
+		}
+		return curved;
+	});
+
 	/** The curves beside the front view, laid out, or null where the sheet has no room for them now. */
 	readonly charts = $derived.by(() => {
 		const { charts: box, wheelY } = this.sheet.layout;
 		if (!box) return null;
-		const { editor, preferences, solution } = this.#source;
+		const { editor, preferences } = this.#source;
 		const left = box.x + LEADER_ROOM + AXIS_ROOM + 12;
 		const width = box.x + box.w - left - 4;
-		const count = width >= 330 ? 4 : width >= 150 ? 3 : 2;
-		const top = box.y + CHARTS_HEAD;
+		const count = width >= 340 ? 4 : width >= 204 ? 3 : 2;
+		const top = box.y + (this.#source.mode === 'narrow' ? SWITCH_ROOM : 0) + CHARTS_HEAD;
 		const bottom = box.y + box.h - CHARTS_FOOT;
 		const { domain } = this.travel;
 		// Ride height stands at the wheel centre's own height on the sheet; the travel's scale is as large as that allows.
 		const perUnit = Math.min((wheelY - top) / domain[1], (bottom - wheelY) / -domain[0]);
 		const y = linear(domain, [wheelY - domain[0] * perUnit, wheelY - domain[1] * perUnit]);
 		const { state } = this;
-		const curved: Curved[] = [];
-		if (state && solution.ride && solution.sweep)
-			curved.push({ label: this.name, ride: solution.ride, sweep: solution.sweep });
-		if (this.ghosted && this.#previous && curved.length) {
-			curved.push({ label: this.#previous.letter, ride: this.#previous.ride, sweep: this.#previous.sweep });
-		}
+		const curved = this.#curved;
 		const specs = state
 			? CURVES.slice(0, count).map((key) => curveSpec(key, curved, state, editor.document.targets, preferences))
 			: [];
@@ -293,6 +304,13 @@ export class PointsModel {
 			plateX: box.x + LEADER_ROOM - 2
 		};
 	});
+
+	/** One figure's chart on its own, for a phone. */
+	chart(key: FigureKey): ChartSpec | null {
+		const { state } = this;
+		const { editor, preferences } = this.#source;
+		return state && this.#curved.length ? curveSpec(key, this.#curved, state, editor.document.targets, preferences) : null;
+	}
 
 	/** What stands at the end of the curve in hand. */
 	name = $state('draft');

@@ -1,9 +1,10 @@
 import { axisWord, DATUM_AXES, moveToDatum, toDatum, type Datum, type DatumAxis, type Side } from '$lib/domain/datum';
-import { formatDelta, formatNumber, formatQuantity } from '$lib/format';
+import { formatDelta, formatQuantity } from '$lib/format';
 import type { Vec3 } from '$lib/kinematics';
 import type { ViewKey } from '$lib/drawing/projection';
 import type { Preferences } from '$lib/schemas/preferences';
-import { MM_PER_INCH } from '$lib/units';
+
+export { stepMm, travelText } from '$lib/charts/travel';
 
 /** A place in the builder's datum and units: "618.0 out", "474.0 up", "22.0 aft". */
 export function placeWords(point: Vec3, datum: Datum, side: Side, preferences: Preferences): Record<DatumAxis, string> {
@@ -26,18 +27,4 @@ export function viewAxes(view: ViewKey): { across: DatumAxis; up: DatumAxis } | 
 	if (view === 'front') return { across: 'out', up: 'up' };
 	if (view === 'top') return { across: 'out', up: 'fore' };
 	return view === 'side' ? { across: 'fore', up: 'up' } : null;
-}
-
-/** One step of a drag or an arrow key, mm: 1 mm or 1/16 in; fine 0.1 mm or 1/64 in. */
-export function stepMm(fine: boolean, preferences: Preferences): number {
-	if (preferences.length === 'mm') return fine ? 0.1 : 1;
-	return MM_PER_INCH / (fine ? 64 : 16);
-}
-
-/** The travel slide's figure: signed, tenths of a mm only where there are any. */
-export function travelText(mm: number, preferences: Preferences): string {
-	if (preferences.length === 'in') return formatDelta(mm, 'length', preferences);
-	const tenths = Math.round(mm * 10) / 10;
-	const text = formatNumber(tenths, Number.isInteger(tenths) ? 0 : 1, preferences);
-	return tenths > 0 ? `+${text}` : text;
 }

@@ -1,0 +1,72 @@
+import type { DrawnCorner } from './scene';
+import { tyreShape, type TyreShape } from './tyre';
+import type { MarkKey, Places } from './linkage';
+import { parseTyreSize } from '$lib/domain/tyres';
+import { entryOf, POINT_ORDER } from '$lib/domain/points';
+import type { CornerState, Vec3 } from '$lib/kinematics';
+import type { CornerEntry } from '$lib/schemas/axle';
+
+/** The tyre as drawn: its loaded radius, and width and rim by the build's tyre size where that can be read. */
+export interface DrawnTyre {
+	shape: TyreShape;
+	rimRadius: number | null;
+}
+
+const SOME_RADIUS = 300;
+
+export function tyreOf(loadedRadius: number | null, size: string): DrawnTyre {
+	const read = parseTyreSize(size);
+	const radius = loadedRadius ?? (read ? read.freeDiameter / 2 : SOME_RADIUS);
+	return {
+		shape: tyreShape(radius, read?.sectionWidth ?? null),
+		rimRadius: read && read.rimDiameter / 2 < radius ? read.rimDiameter / 2 : null
+	};
+}
+
+/** A solved position of a corner, ready for the drawing. */
+export function drawnState(state: CornerState, tyre: DrawnTyre): DrawnCorner {
+	const places: Places = { ...state.points };
+	if (state.coilover) {
+		places.coiloverTop = state.coilover.top;
+		places.coiloverBottom = state.coilover.bottom;
+	}
+	return {
+		places,
+		wheel: {
+			centre: state.wheelCentre,
+			spin: state.spinAxis,
+			contact: state.contactPoint,
+			tyre: tyre.shape,
+			rimRadius: tyre.rimRadius
+		},
+		rollCentre: state.rollCentreHeight,
+		rollCentreByArms: state.rollCentreByArms
+	};
+}
+
+/** A corner as it was typed, whole or not: marks where all three coordinates are there, the wheel where track and radius are. */
+export function drawnEntry(corner: CornerEntry, side: 'left' | 'right', tyre: DrawnTyre): DrawnCorner {
+	const places: Places = {};
+	for (const key of POINT_ORDER) {
+		const entry = entryOf(corner, key);
+		if (entry && entry.every((value) => value !== null)) places[key as MarkKey] = entry as Vec3;
+	}
+	return { places, wheel: enteredWheel(corner, side, tyre), rollCentre: null, rollCentreByArms: null };
+}
+
+const RADIAN = Math.PI / 180;
+
+/** The wheel from its entered figures alone, by the definitions of camber and toe: no linkage is needed to place it. */
+function enteredWheel({ wheel }: CornerEntry, side: 'left' | 'right', tyre: DrawnTyre): DrawnCorner['wheel'] {
+	const { track, loadedRadius, x, camber, toe } = wheel;
+	if (track === null || loadedRadius === null) return null;
+	const out = side === 'left' ? 1 : -1;
+	const [c, t] = [camber * RADIAN, toe * RADIAN];
+	const spin: Vec3 = [Math.cos(c) * Math.sin(t), out * Math.cos(c) * Math.cos(t), -Math.sin(c)];
+	// From the contact point up in the wheel plane: the vertical less its part along the axle.
+	const rise = Math.sqrt(1 - spin[2] * spin[2]);
+	const up: Vec3 = [(-spin[2] * spin[0]) / rise, (-spin[2] * spin[1]) / rise, rise];
+	const contact: Vec3 = [x, (out * track) / 2, 0];
+	const centre: Vec3 = [contact[0] + up[0] * loadedRadius, contact[1] + up[1] * loadedRadius, up[2] * loadedRadius];
+	return { centre, spin, contact, tyre: tyre.shape, rimRadius: tyre.rimRadius };
+}
