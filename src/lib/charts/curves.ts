@@ -68,7 +68,12 @@ function pointsOf(key: FigureKey, { ride, sweep }: Curved, preferences: Preferen
 }
 
 /** The largest and smallest of a figure over a stretch of travel, or null where it is not all there. */
-function spreadOf(key: FigureKey, { ride, sweep }: Curved, from: number, to: number): [low: number, high: number] | null {
+function spreadOf(
+	key: FigureKey,
+	{ ride, sweep }: Curved,
+	from: number,
+	to: number
+): [low: number, high: number] | null {
 	const values = sweep.states
 		.filter(({ travel }) => travel >= from && travel <= to)
 		.map((state) => OUTPUTS[key].read(state, ride));
@@ -86,7 +91,12 @@ function bandOf(target: Target, first: Curved | undefined): Band | null {
 	return spread ? { from, to, low: spread[0], high: spread[0] + high } : null;
 }
 
-function bandsOf(key: FigureKey, first: Curved | undefined, targets: readonly Target[], preferences: Preferences): Band[] {
+function bandsOf(
+	key: FigureKey,
+	first: Curved | undefined,
+	targets: readonly Target[],
+	preferences: Preferences
+): Band[] {
 	const { quantity } = OUTPUTS[key];
 	const shown = (value: number | null) => (value === null ? null : toDisplay(value, quantity, preferences));
 	const travel = (mm: number) => toDisplay(mm, 'length', preferences);
@@ -98,7 +108,12 @@ function bandsOf(key: FigureKey, first: Curved | undefined, targets: readonly Ta
 }
 
 /** The shown value of a figure in a state, for the cursor; null where it does not exist. */
-export function shownValue(key: FigureKey, state: CornerState | null, ride: CornerState | null, preferences: Preferences): number | null {
+export function shownValue(
+	key: FigureKey,
+	state: CornerState | null,
+	ride: CornerState | null,
+	preferences: Preferences
+): number | null {
 	const value = state && ride ? OUTPUTS[key].read(state, ride) : null;
 	return value === null ? null : toDisplay(value, OUTPUTS[key].quantity, preferences);
 }

@@ -1,4 +1,13 @@
-import { chartDomain, linear, readableTicks, type Band, type Domain, type DomainRule, type Limit, type Series } from './scale';
+import {
+	chartDomain,
+	linear,
+	readableTicks,
+	type Band,
+	type Domain,
+	type DomainRule,
+	type Limit,
+	type Series
+} from './scale';
 
 /** One figure to be charted over travel. Values are in the unit they are shown in; so is the travel. */
 export interface ChartSpec {
@@ -43,7 +52,11 @@ export interface ChartLayout {
 
 /** Room taken at the left by travel's ticks and the slide. */
 export const AXIS_ROOM = 46;
-const GAP = 14;
+/** Between two charts of a row. */
+export const CHART_GAP = 14;
+/** Room over a row's plots for names, figures and end labels, and under them for ticks. */
+export const ROW_HEAD = 58;
+export const ROW_FOOT = 32;
 
 /** How many charts stand side by side: three at 1440, two at 768, one at 390, by the width they have. */
 export function columnsFor(width: number): number {
@@ -53,9 +66,9 @@ export function columnsFor(width: number): number {
 
 /** Lays charts side by side from `left` over `width` px. */
 export function layCharts(specs: readonly ChartSpec[], left: number, width: number): ChartLayout[] {
-	const each = (width - GAP * (specs.length - 1)) / Math.max(1, specs.length);
+	const each = (width - CHART_GAP * (specs.length - 1)) / Math.max(1, specs.length);
 	return specs.map((spec, k) => {
-		const start = left + k * (each + GAP);
+		const start = left + k * (each + CHART_GAP);
 		const domain = chartDomain(spec.series, spec.bands, spec.rule);
 		return {
 			left: start,
@@ -69,7 +82,10 @@ export function layCharts(specs: readonly ChartSpec[], left: number, width: numb
 
 /** The reachable part of the travel domain: where the slide may stand. */
 export function reachable(travel: TravelSpec): Domain {
-	return [Math.max(travel.domain[0], travel.low?.travel ?? -Infinity), Math.min(travel.domain[1], travel.high?.travel ?? Infinity)];
+	return [
+		Math.max(travel.domain[0], travel.low?.travel ?? -Infinity),
+		Math.min(travel.domain[1], travel.high?.travel ?? Infinity)
+	];
 }
 
 /** Where a key takes the slide, or null for a key that is not one of its own. */

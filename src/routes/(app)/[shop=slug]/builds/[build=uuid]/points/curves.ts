@@ -3,9 +3,6 @@ import { formatQuantity } from '$lib/format';
 import type { FigureKey } from '$lib/schemas/axle';
 import type { Preferences } from '$lib/schemas/preferences';
 
-export { curveSpec, type Curved } from '$lib/charts/curves';
-export { travelSpec } from '$lib/charts/travel';
-
 /** The curves beside the front view, most wanted first; as many as there is room for. */
 export const CURVES: readonly FigureKey[] = ['camber', 'bumpSteer', 'rollCentreHeight', 'caster'];
 

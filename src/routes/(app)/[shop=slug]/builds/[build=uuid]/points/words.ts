@@ -4,8 +4,6 @@ import type { Vec3 } from '$lib/kinematics';
 import type { ViewKey } from '$lib/drawing/projection';
 import type { Preferences } from '$lib/schemas/preferences';
 
-export { stepMm, travelText } from '$lib/charts/travel';
-
 /** A place in the builder's datum and units: "618.0 out", "474.0 up", "22.0 aft". */
 export function placeWords(point: Vec3, datum: Datum, side: Side, preferences: Preferences): Record<DatumAxis, string> {
 	const place = toDatum([...point], datum, side);

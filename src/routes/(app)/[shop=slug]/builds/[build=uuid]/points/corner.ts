@@ -1,1 +1,0 @@
-export { drawnEntry, drawnState, tyreOf, type DrawnTyre } from '$lib/drawing/corner';
