@@ -1,4 +1,5 @@
 import type { SignedInPerson } from '$lib/schemas/auth';
+import type { Problem } from '$lib/schemas/problem';
 
 declare global {
 	namespace App {
@@ -13,6 +14,8 @@ declare global {
 			message: string;
 			/** The id under which the log holds the details. */
 			id?: string;
+			/** What an endpoint answers as problem+json; pages use `message` alone. */
+			problem?: Omit<Problem, 'type' | 'status' | 'title'>;
 		}
 	}
 }

@@ -11,7 +11,7 @@ import { openTestServer, Visitor } from '../support/server';
 
 // The real verification, watched: equal work for a known and an unknown address is counted, not timed.
 vi.mock('@node-rs/argon2', async (original) => {
-	const real = await original<typeof import('@node-rs/argon2')>();
+	const real = await original<{ verify: typeof verify }>();
 	return { ...real, verify: vi.fn(real.verify) };
 });
 

@@ -1,10 +1,11 @@
 import type { RequestEvent } from '@sveltejs/kit';
-import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { afterAll, beforeAll, describe, expect, test, vi } from 'vitest';
 import { handle, handleError } from '../../src/hooks.server';
 import { actions as signInActions, load as signInLoad } from '../../src/routes/(public)/sign-in/+page.server';
 import { actions as signUpActions } from '../../src/routes/(public)/sign-up/+page.server';
 import { GET as signOutGet, POST as signOutPost } from '../../src/routes/(public)/sign-out/+server';
-import { log } from '../../src/lib/server/log';
+import { Person } from '../../src/lib/server/db';
+import { createLog, log } from '../../src/lib/server/log';
 import { seedDemo } from '../../src/lib/server/migrator';
 import { signedIn, SHOP } from '../support/people';
 import { openTestServer, refusal, Visitor } from '../support/server';
@@ -45,22 +46,39 @@ describe('every answer', () => {
 });
 
 describe('an unexpected error', () => {
-	test('shows an id that is in the log, and the log holds no address, statement or value', async () => {
-		const lines: Record<string, unknown>[] = [];
-		const event = await new Visitor().event('/quill-chassis/builds?q=secret');
-		const error = Object.assign(new Error('no answer for marta@demo.example'), {
-			sql: 'SELECT secret',
-			parameters: ['secret']
-		});
-		const written = captureLog(lines);
+	test('shows an id under which the log holds it', async () => {
+		const event = await new Visitor().event('/quill-chassis/builds?q=typed');
+		const error = new Error('no answer');
+		const written = vi.spyOn(log, 'error');
 		const shown = await handleError({ error, event: event as RequestEvent, status: 500, message: 'Internal Error' });
-		written.stop();
 		expect(shown).toEqual({ message: 'Something went wrong here.', id: event.locals.requestId });
-		expect(lines[0]).toMatchObject({
-			id: event.locals.requestId,
-			err: { type: 'Error', message: 'no answer for [address]' }
+		expect(written).toHaveBeenCalledWith(
+			{ id: event.locals.requestId, route: '/quill-chassis/builds', status: 500, err: error },
+			'Internal Error'
+		);
+		written.mockRestore();
+	});
+
+	test('the log holds its kind and place; no address, statement or value', async () => {
+		const lines: string[] = [];
+		const scratch = createLog({ write: (line) => void lines.push(line) });
+		scratch.error({
+			err: Object.assign(new Error('no answer for marta@demo.example'), {
+				sql: 'SELECT umbrella',
+				parameters: ['umbrella']
+			})
 		});
-		expect(JSON.stringify(lines)).not.toMatch(/secret|marta@/);
+		const duplicate: unknown = await Person.create({ ...known, email: 'owner@demo.example' }).catch(
+			(error: unknown) => error
+		);
+		scratch.error({ err: duplicate });
+		scratch.error(duplicate);
+		expect(lines.map((line) => JSON.parse(line) as unknown)).toMatchObject([
+			{ err: { type: 'Error', message: 'no answer for [address]' } },
+			{ err: { type: 'SequelizeUniqueConstraintError', code: 'ER_DUP_ENTRY' } },
+			{ err: { type: 'SequelizeUniqueConstraintError', code: 'ER_DUP_ENTRY' } }
+		]);
+		expect(lines.join()).not.toMatch(/umbrella|marta@|owner@/);
 	});
 
 	test('a page that does not exist is no error of ours', async () => {
@@ -73,26 +91,14 @@ describe('an unexpected error', () => {
 	});
 });
 
-function captureLog(lines: Record<string, unknown>[]) {
-	const write = process.stdout.write.bind(process.stdout);
-	const stream = Object.getOwnPropertySymbols(log).map((symbol) => (log as unknown as Record<symbol, unknown>)[symbol]);
-	const sink = stream.find(
-		(value): value is { write: (line: string) => void } =>
-			typeof (value as { write?: unknown } | null)?.write === 'function'
-	);
-	if (!sink) throw new Error('the log has no stream');
-	const original = sink.write.bind(sink);
-	sink.write = (line) => void lines.push(JSON.parse(line) as Record<string, unknown>);
-	const { level } = log;
-	log.level = 'error';
-	return {
-		stop: () => {
-			sink.write = original;
-			log.level = level;
-			process.stdout.write = write;
-		}
-	};
-}
+const known = {
+	id: '01930000-0000-7000-8000-000000000001',
+	name: 'x',
+	passwordHash: '',
+	preferences: '{}',
+	demo: false,
+	createdAt: new Date()
+};
 
 describe('signing in and out by form', () => {
 	const post = async (visitor: Visitor, fields: Record<string, string>) =>
@@ -101,7 +107,7 @@ describe('signing in and out by form', () => {
 
 	test('a wrong password keeps the address typed, never the password', async () => {
 		const event = await post(new Visitor(), { ...right, password: 'not this one', next: `/${SHOP}/stock` });
-		const answer = (await signInActions.default(event as never)) as unknown as {
+		const answer = (await signInActions.default?.(event as never)) as unknown as {
 			status: number;
 			data: { form: { data: object; message: string } };
 		};
@@ -117,7 +123,7 @@ describe('signing in and out by form', () => {
 		['', `/${SHOP}/builds`]
 	])('after sign-in, next=%j leads to %s', async (next, place) => {
 		expect(
-			await refusal(async () => signInActions.default((await post(new Visitor(), { ...right, next })) as never))
+			await refusal(async () => signInActions.default?.((await post(new Visitor(), { ...right, next })) as never))
 		).toEqual({
 			status: 303,
 			location: place
@@ -136,13 +142,13 @@ describe('signing in and out by form', () => {
 
 	test('signing up leads to the new shop’s builds; a common password is refused at its field', async () => {
 		const fields = { name: 'Cy Moss', email: 'cy@example.test', password: 'qwerty123456', shop: 'Moss' };
-		const refused = (await signUpActions.default((await post(new Visitor(), fields)) as never)) as unknown as {
+		const refused = (await signUpActions.default?.((await post(new Visitor(), fields)) as never)) as unknown as {
 			data: { form: { errors: Record<string, string[]>; data: { password: string } } };
 		};
 		expect(refused.data.form.errors.password?.[0]).toContain('common');
 		expect(refused.data.form.data.password).toBe('');
 		const good = { ...fields, password: 'level the table first' };
-		expect(await refusal(async () => signUpActions.default((await post(new Visitor(), good)) as never))).toEqual({
+		expect(await refusal(async () => signUpActions.default?.((await post(new Visitor(), good)) as never))).toEqual({
 			status: 303,
 			location: '/moss/builds'
 		});

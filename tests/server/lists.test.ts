@@ -60,7 +60,7 @@ const query = (search: string) => buildListSchema.parse(Object.fromEntries(new U
 /** The statements a piece of work sends, as sent. */
 async function statements(work: () => Promise<unknown>): Promise<string[]> {
 	const sent: string[] = [];
-	const { options } = database();
+	const { options } = database() as unknown as { options: { logging: false | ((sql: string) => void) } };
 	options.logging = (sql) => void sent.push(sql.replace(/^Executing \([^)]*\): /, ''));
 	try {
 		await work();

@@ -60,7 +60,7 @@ export class Visitor {
 		const event = {
 			url,
 			params,
-			route: { id: path },
+			route: { id: url.pathname },
 			request: new Request(url, { method, headers: sent, body: payload }),
 			cookies: {
 				get: (name: string) => this.cookies.get(name),

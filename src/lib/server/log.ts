@@ -22,10 +22,24 @@ function withoutAddresses(text: string): string {
 	return text.replace(/[^\s@<>"']+@[^\s@<>"']+/g, '[address]').slice(0, 500);
 }
 
-/** The application's log: JSON lines on stdout. Callers pass ids and counts; no addresses, tokens or bodies. */
-export const log = pino({
-	level: process.env.LOG_LEVEL || 'info',
-	base: undefined,
-	timestamp: pino.stdTimeFunctions.isoTime,
-	serializers: { err: describeError }
-});
+/** A log of JSON lines, to stdout unless told otherwise. */
+export function createLog(destination?: pino.DestinationStream): pino.Logger {
+	const options: pino.LoggerOptions = {
+		level: process.env.LOG_LEVEL || 'info',
+		base: undefined,
+		timestamp: pino.stdTimeFunctions.isoTime,
+		serializers: { err: describeError },
+		// Left to itself pino repeats an error's message, values and all, as the line's own.
+		hooks: {
+			logMethod([first, ...rest], method) {
+				const error: unknown = first instanceof Error ? first : (first as { err?: unknown } | null)?.err;
+				const fields = first instanceof Error ? { err: first } : first;
+				method.apply(this, error && rest.length === 0 ? [fields, 'error'] : [fields, ...rest]);
+			}
+		}
+	};
+	return destination ? pino(options, destination) : pino(options);
+}
+
+/** The application's log. Callers pass ids and counts; no addresses, tokens or bodies. */
+export const log = createLog();

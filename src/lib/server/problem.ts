@@ -1,15 +1,6 @@
 import { error } from '@sveltejs/kit';
 import type { FieldError, Problem } from '../schemas/problem';
 
-declare global {
-	namespace App {
-		interface Error {
-			/** What an endpoint answers as problem+json; pages use `message` alone. */
-			problem?: Omit<Problem, 'type' | 'status' | 'title'>;
-		}
-	}
-}
-
 const TITLES: Record<number, string> = {
 	400: 'The request cannot be read',
 	401: 'Sign in first',
