@@ -37,7 +37,7 @@ export interface AxleDifference {
 
 const mirrored = ([x, y, z]: Readonly<PointEntry>): PointEntry => [x, y === null ? null : 0 - y, z];
 
-/** The right corner as entered, or the mirror image of the left. */
+/** The right corner as entered, or the mirror image of the left, which shares nothing with it and may be changed. */
 export function rightEntry({ left, right }: AxleDocument): CornerEntry {
 	if (right !== 'mirror') return right;
 	const points = Object.fromEntries(Object.entries(left.points).map(([key, entry]) => [key, mirrored(entry)]));
@@ -46,7 +46,7 @@ export function rightEntry({ left, right }: AxleDocument): CornerEntry {
 		top: mirrored(left.coilover.top),
 		bottom: mirrored(left.coilover.bottom)
 	};
-	return { ...left, points: points as CornerEntry['points'], coilover };
+	return { points: points as CornerEntry['points'], wheel: { ...left.wheel }, coilover };
 }
 
 function movement(before: Readonly<PointEntry>, after: Readonly<PointEntry>): Vec3 | null {

@@ -131,16 +131,17 @@ function columnsByHead(rows: readonly string[][], { row, place, by }: Head, datu
 
 /** Without a head: a name, where one stands before or after the numbers, then out, up, fore as the table has them. */
 function columnsByOrder(rows: readonly string[][], datum: Datum): Columns | null {
-	const start = rows.findIndex((row) => row.filter(looksNumeric).length >= 3);
-	const first = rows[start];
+	const first = rows.find((row) => row.filter(looksNumeric).length >= 3);
 	if (!first) return null;
 	const numeric = first.map((_, at) => at).filter((at) => looksNumeric(first[at] ?? ''));
 	const [out, up, fore] = numeric.slice(-3);
 	if (out === undefined || up === undefined || fore === undefined) return null;
 	const name = first.findIndex((cell, at) => cell !== '' && !numeric.includes(at));
-	const unit = unitAbove(rows.slice(0, start));
+	// A row before it may lack a number and still be one of the list.
+	const body = rows.findIndex((row) => [out, up, fore].some((at) => looksNumeric(row[at] ?? '')));
+	const unit = unitAbove(rows.slice(0, body));
 	return {
-		body: start,
+		body,
 		name: name < 0 ? null : name,
 		place: { out, up, fore },
 		word: { out: 'out', up: 'up', fore: axisWord('fore', datum) },

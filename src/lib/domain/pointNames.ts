@@ -55,6 +55,8 @@ const SHORT: Readonly<Record<string, PointKey>> = {
 	cob: 'coiloverBottom'
 };
 
+const short = (text: string): PointKey | undefined => (Object.hasOwn(SHORT, text) ? SHORT[text] : undefined);
+
 const WORDS: readonly (readonly [RegExp, string])[] = [
 	[/^(upper|top|up|uca|ua|u)$/, 'upper'],
 	[/^(lower|bottom|low|lca|la|bot)$/, 'lower'],
@@ -119,6 +121,6 @@ export function readPointName(name: string): NamedPoint | null {
 			: null;
 	const telling = words.filter((word) => !/^(left|lh|lhs|right|rh|rhs)$/.test(word));
 	const compact = telling.filter((word) => !EMPTY.test(word)).join('');
-	const key = SHORT[compact] ?? SHORT[telling.join('')] ?? keyOf(telling);
+	const key = short(compact) ?? short(telling.join('')) ?? keyOf(telling);
 	return key ? { key, side } : null;
 }

@@ -192,15 +192,17 @@ const DECIMAL_QUESTION: PasteQuestion = {
 };
 
 /** Numbers without a unit whose size fits the other system better: points of a car lie some hundred mm, or some ten inches, out. */
-function unitQuestion(rows: readonly PasteRow[], unit: LengthUnit, known: boolean): PasteQuestion | null {
-	if (known || (unit !== 'mm' && unit !== 'in')) return null;
-	const sizes = rows.flatMap(({ key, cells }) => (key ? DATUM_AXES.map((axis) => Math.abs(cells[axis].mm ?? 0)) : []));
-	const largest = Math.max(0, ...sizes) / (unit === 'in' ? 25.4 : 1);
-	const doubtful = unit === 'mm' ? largest > 0 && largest <= 60 : largest >= 120;
+function unitQuestion(rows: readonly PasteRow[], unit: LengthUnit): PasteQuestion | null {
+	const texts = rows.flatMap(({ key, cells }) => (key ? DATUM_AXES.map((axis) => cells[axis].text) : []));
+	const sizes = texts
+		.filter((text) => /^[-+−–]?[\d.,]+$/.test(text))
+		.map((text) => parseFloat(text.replace(/^[-+−–]/, '')));
+	const largest = Math.max(0, ...sizes.filter(Number.isFinite));
+	const doubtful = unit === 'mm' ? largest > 0 && largest <= 60 : unit === 'in' && largest >= 120;
 	if (!doubtful) return null;
 	return {
 		about: 'unit',
-		message: `No unit is named and the largest number is ${Math.round(largest * 10) / 10}. Are these mm or inches?`,
+		message: `No unit is named and the largest number is ${Math.round(largest)}. Are these mm or inches?`,
 		choices: [
 			{ value: 'mm', label: 'mm' },
 			{ value: 'in', label: 'inches' }
@@ -278,7 +280,8 @@ export function readPaste(text: string, options: PasteOptions): PasteResult {
 	const unit = reading.unitOf.out;
 	const unitFrom = options.unit ? 'person' : columns.unit.out ? 'head' : 'preferences';
 	const ambiguous = reading.decimal === null;
-	const doubt = ambiguous ? DECIMAL_QUESTION : unitQuestion(rows, unit, unitFrom !== 'preferences');
+	const unitDoubt = unitFrom === 'preferences' ? unitQuestion(rows, unit) : null;
+	const doubt = ambiguous ? DECIMAL_QUESTION : unitDoubt;
 	const errors = rows.flatMap(({ line, problem, cells }) =>
 		problem ? [`row ${line}: ${problem}`] : DATUM_AXES.flatMap((axis) => cells[axis].error ?? [])
 	);

@@ -30,6 +30,8 @@ export const VERDICT_WORDS: Readonly<Record<Verdict, string>> = {
 
 /** Outside the band by up to this part of its width (of the limit itself, where there is one) is near. */
 const NEAR = 0.2;
+/** 2.2 less 2 is more than a fifth of 1 in binary. */
+const ROUNDING = 1e-9;
 
 type Valued = { value: number; reason: null } | { value: null; reason: string };
 
@@ -42,7 +44,7 @@ export function verdictOf(value: number | null, low: number | null, high: number
 	if (outside <= 0) return 'pass';
 	const width = low !== null && high !== null ? high - low : 0;
 	const margin = NEAR * (width > 0 ? width : Math.abs((under > 0 ? low : high) ?? 0));
-	return outside <= margin ? 'near' : 'miss';
+	return outside <= margin * (1 + ROUNDING) ? 'near' : 'miss';
 }
 
 function bindsIn(sweep: ReturnType<Judged['over']>): string | null {

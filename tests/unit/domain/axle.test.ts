@@ -196,7 +196,7 @@ describe('canonical bytes and hash', () => {
 	/** RFC 8785, 3.2.2: how the numbers of its sample are written. */
 	it('writes the numbers of the sample', () => {
 		const axle = emptyAxle();
-		axle.left.points.upperBall = [333333333.33333329, 1e30, 4.5];
+		axle.left.points.upperBall = [333333333.3333333, 1e30, 4.5];
 		axle.left.points.lowerBall = [2e-3, 0.000000000000000000000000001, null];
 		expect(canonicalAxle(axle)).toContain('"upperBall":[333333333.3333333,1e+30,4.5]');
 		expect(canonicalAxle(axle)).toContain('"lowerBall":[0.002,1e-27,null]');
