@@ -1,4 +1,4 @@
-import { OUTPUTS } from '$lib/domain/outputs';
+import { OUTPUTS, reasonOf } from '$lib/domain/outputs';
 import { decimalsOf, formatMinutes, formatNumber, NONE, unitLabel } from '$lib/format';
 import type { CornerState, Sweep } from '$lib/kinematics';
 import type { FigureKey, Target } from '$lib/schemas/axle';
@@ -152,6 +152,9 @@ export function curveSpec(
 				? formatMinutes(shown)
 				: formatNumber(shown, decimals ?? decimalsOf(quantity, preferences), preferences);
 		},
-		cursorValue: shownValue(key, now, first?.ride ?? null, preferences)
+		cursorValue: shownValue(key, now, first?.ride ?? null, preferences),
+		...(first && series.every(({ points }) => points.every(({ value }) => value === null))
+			? { why: reasonOf(key, first.ride) ?? 'Nothing to draw over this travel.' }
+			: {})
 	};
 }

@@ -23,6 +23,8 @@ export interface ChartSpec {
 	format: (value: number | null, decimals?: number) => string;
 	/** What stands at the cursor: the figure of the first series there, and of more where wanted. */
 	cursorValue: number | null;
+	/** Why there is no curve, where there is none. */
+	why?: string;
 }
 
 /** The travel all charts of a group share, and the last reachable places where the mechanism binds. */

@@ -16,8 +16,10 @@ export interface TravelTable {
 	readonly limits: readonly string[];
 }
 
-/** Decimals kept in a file beyond those on the screen. */
-const MORE_DECIMALS = 3;
+/** Significant digits in a file: all that a 64-bit number holds, less the last, which is rounding. */
+const FILE_DIGITS = 15;
+/** What a file says of its own figures. */
+export const FILE_PRECISION = `Figures as computed, to ${FILE_DIGITS} significant digits: geometry, not strength.`;
 
 function limitInWords(end: 'droop' | 'bump', limit: SweepLimit | undefined, preferences: Preferences): string[] {
 	if (!limit) return [];
@@ -54,18 +56,16 @@ export function travelTable(
 	};
 }
 
-/** The table as a CSV file: one head row with units, then numbers; binding limits as rows of text at the end. */
-export function travelCsv(table: TravelTable, preferences: Preferences): string {
-	const units = { ...preferences, angle: 'decimal' } as const;
-	const decimals = table.head.map(
-		({ key }) => decimalsOf(key === 'travel' ? 'length' : OUTPUTS[key].quantity, units) + MORE_DECIMALS
-	);
-	const rounded = (value: number | null, column: number) =>
-		value === null ? null : Number(value.toFixed(decimals[column] ?? 6));
+/**
+ * The table as a CSV file: one head row with units, then numbers at full precision; binding limits and `notes` as rows of text
+ * at the end.
+ */
+export function travelCsv(table: TravelTable, preferences: Preferences, notes: readonly string[] = []): string {
+	const exact = (value: number | null) => (value === null ? null : Number(value.toPrecision(FILE_DIGITS)));
 	const rows: CsvCell[][] = [
 		table.head.map(({ label, unit }) => (unit === '' ? label : `${label}, ${unit}`)),
-		...table.rows.map((row) => row.map(rounded)),
-		...table.limits.map((limit) => [limit])
+		...table.rows.map((row) => row.map(exact)),
+		...[...table.limits, ...notes].map((note) => [note])
 	];
 	return toCsv(rows, preferences);
 }
