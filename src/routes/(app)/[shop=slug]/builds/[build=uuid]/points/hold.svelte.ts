@@ -8,7 +8,7 @@ import type { DraftEditor } from '$lib/state/draft.svelte';
 import type { Selection } from '$lib/state/selection.svelte';
 import { MARK_NAMES, type PointsModel } from './model.svelte';
 import { movedTo, nudged, writePlace } from './place';
-import { stepMm } from './words';
+import { stepMm } from '$lib/charts/travel';
 
 export interface HoldSource {
 	readonly model: PointsModel;

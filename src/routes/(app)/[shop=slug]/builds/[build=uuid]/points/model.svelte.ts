@@ -25,8 +25,10 @@ import type { Preferences } from '$lib/schemas/preferences';
 import type { DraftEditor } from '$lib/state/draft.svelte';
 import type { Selection } from '$lib/state/selection.svelte';
 import type { Solution } from '$lib/state/solution.svelte';
-import { drawnEntry, drawnState, tyreOf } from './corner';
-import { CURVES, curveSpec, quantityText, travelSpec, type Curved } from './curves';
+import { drawnEntry, drawnState, tyreOf } from '$lib/drawing/corner';
+import { curveSpec, type Curved } from '$lib/charts/curves';
+import { travelSpec } from '$lib/charts/travel';
+import { CURVES, quantityText } from './curves';
 import { figureRows, spokenFigure, type FigureRow } from './figures';
 
 /** An earlier revision that lies under the drawing. */
