@@ -23,6 +23,7 @@ import {
 	type V3
 } from '../../support/newton';
 import { evaluate } from '../../support/newton-figures';
+import { notFinite } from '../../support/finite';
 import { runs, SEED } from '../../support/seed';
 
 console.log(`outside properties: FC_SEED=${SEED}`);
@@ -51,14 +52,6 @@ function attempt<T>(act: () => T): T | KinematicsError {
 }
 
 const failed = (x: unknown): x is KinematicsError => x instanceof KinematicsError;
-
-/** Names of numbers in a result that are not finite. */
-function notFinite(value: unknown, path = ''): string[] {
-	if (typeof value === 'number') return Number.isFinite(value) ? [] : [`${path} = ${value}`];
-	if (value === null || typeof value !== 'object') return [];
-	const plain = 'toJSON' in value && typeof value.toJSON === 'function' ? (value.toJSON() as object) : value;
-	return Object.entries(plain).flatMap(([key, inner]) => notFinite(inner, `${path}.${key}`));
-}
 
 /** Fails unless two numbers are within a tolerance. (A plain comparison first: most of a run is spent here.) */
 function near(a: number, b: number, tolerance: number, name = ''): void {
