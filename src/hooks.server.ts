@@ -3,7 +3,9 @@ import type { Handle, HandleServerError, ServerInit } from '@sveltejs/kit';
 import { start, stop } from '$lib/server/start';
 import { readSession } from '$lib/server/auth/session';
 import { newRequestId } from '$lib/server/ids';
+import { isApi } from '$lib/server/guard';
 import { log } from '$lib/server/log';
+import { problemResponse } from '$lib/server/problem';
 
 export const init: ServerInit = async () => {
 	if (!building) await start();
@@ -17,10 +19,11 @@ export const handle: Handle = async ({ event, resolve }) => {
 	event.locals.requestId = newRequestId();
 	Object.assign(event.locals, await readSession(event));
 	const theme = event.locals.person?.preferences.theme ?? 'system';
-	const response = await resolve(event, {
+	const resolved = await resolve(event, {
 		transformPageChunk: ({ html }) => html.replace('%trammel.theme%', theme),
 		filterSerializedResponseHeaders: (name) => name === 'content-type'
 	});
+	const response = isApi(event) ? asProblem(resolved) : resolved;
 	harden(response.headers, event.locals.person !== null);
 	log.info({
 		id: event.locals.requestId,
@@ -31,6 +34,14 @@ export const handle: Handle = async ({ event, resolve }) => {
 	});
 	return response;
 };
+
+/** What no endpoint answered (an unknown address, a method it has not) is problem+json like every other refusal of the API. */
+function asProblem(response: Response): Response {
+	if (response.status < 400 || response.headers.get('content-type')?.includes('json')) return response;
+	return problemResponse(response.status, {
+		detail: response.status === 405 ? 'This address takes other methods.' : 'There is nothing at this address.'
+	});
+}
 
 function harden(headers: Headers, signedIn: boolean): void {
 	headers.set('x-content-type-options', 'nosniff');

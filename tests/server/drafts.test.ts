@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { axleHash } from '../../src/lib/domain/axle';
 import type { AxleDocument } from '../../src/lib/schemas/axle';
 import type { BuildFacts, DraftData, RevisionFull, RevisionSummary } from '../../src/lib/schemas/build';
 import type { Problem } from '../../src/lib/schemas/problem';
@@ -86,7 +87,10 @@ describe('the draft', () => {
 			field: 'document.left.points.upperBall.1',
 			message: expect.stringContaining('mm') as string
 		});
-		expect((await api(people.builder, build).put({ ...PICKUP, schema: 2 }, 1)).status).toBe(422);
+		const newer = await api(people.builder, build).put({ ...PICKUP, schema: 2 }, 1);
+		expect((newer.body as Problem).errors).toEqual([
+			{ field: 'document.schema', message: 'This document has schema 2; this server reads up to 1.' }
+		]);
 	});
 });
 
@@ -148,7 +152,9 @@ describe('keeping a revision', () => {
 			'B',
 			'A'
 		]);
-		expect(((await builder.revision('B')).body as RevisionFull).document).toEqual(PICKUP);
+		const second = (await builder.revision('B')).body as RevisionFull;
+		expect(second.document).toEqual(PICKUP);
+		expect(second.hash).toBe(await axleHash(PICKUP));
 	});
 
 	test('a stale draft version and a start without or with an old version are refused', async () => {

@@ -43,6 +43,14 @@ describe('every answer', () => {
 		expect(owner.headers.get('cache-control')).toBe('private, no-store');
 		expect(await owner.text()).toBe('<html data-theme="daylight">');
 	});
+
+	test('an API address nothing answers is problem+json too', async () => {
+		const missing: Resolve = async () =>
+			new Response('<!doctype html>', { status: 404, headers: { 'content-type': 'text/html' } });
+		const answer = await handle({ event: await new Visitor().event('/api/v1/nothing'), resolve: missing });
+		expect(answer.headers.get('content-type')).toBe('application/problem+json');
+		expect(await answer.json()).toMatchObject({ status: 404, title: 'Not found' });
+	});
 });
 
 describe('an unexpected error', () => {

@@ -6,6 +6,7 @@ const TITLES: Record<number, string> = {
 	401: 'Sign in first',
 	403: 'Not allowed for your role',
 	404: 'Not found',
+	405: 'Not by this method',
 	409: 'Changed by someone else in the meantime',
 	413: 'Too large',
 	415: 'JSON is expected',

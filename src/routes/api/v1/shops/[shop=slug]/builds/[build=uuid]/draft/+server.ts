@@ -1,6 +1,6 @@
 import { json } from '@sveltejs/kit';
 import { endpoint, readBody, readIfMatch } from '$lib/server/api';
-import { draftBodySchema } from '$lib/server/documents';
+import { draftBodySchema, receiveDocument } from '$lib/server/documents';
 import { readDraft, writeDraft } from '$lib/server/drafts';
 import { guard } from '$lib/server/guard';
 import type { RequestEvent } from './$types';
@@ -15,6 +15,6 @@ export const PUT = endpoint(async (event: RequestEvent) => {
 	const actor = await guard(event, 'draft.write', event.params);
 	const version = readIfMatch(event);
 	const { document } = await readBody(event, draftBodySchema);
-	const saved = await writeDraft(actor, event.params.build, version, document);
+	const saved = await writeDraft(actor, event.params.build, version, receiveDocument(document));
 	return json(saved, { headers: { etag: `"${saved.version}"` } });
 });
