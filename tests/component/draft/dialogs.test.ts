@@ -68,13 +68,11 @@ describe('a conflict', () => {
 	test('lists every point and field with both values, in the units of the person, and takes what is chosen', async () => {
 		await conflict();
 		const user = show(ConflictDialog, { open: true, editor, datum: GROUND_DATUM });
-		const table = screen.getByRole('table', { name: 'Points and fields that both changed' });
-		const ball = within(table).getByRole('row', { name: /Upper ball joint/ });
-		expect(ball).toHaveTextContent('620.0 out 530.0 up −5.0 fore');
-		expect(ball).toHaveTextContent('640.0 out 520.0 up −5.0 fore');
-		const camber = within(table).getByRole('row', { name: /Static camber/ });
-		expect(camber).toHaveTextContent('−2.00°');
-		await user.click(within(ball).getByRole('radio', { name: 'theirs' }));
+		const ball = screen.getByRole('radiogroup', { name: 'Upper ball joint' });
+		expect(ball).toHaveTextContent('before: 620.0 out 520.0 up −5.0 fore');
+		expect(within(ball).getByRole('radio', { name: /^mine: 620.0 out +530.0 up/ })).toBeChecked();
+		expect(screen.getByRole('radio', { name: /^mine: −2.00°/ })).toBeChecked();
+		await user.click(within(ball).getByRole('radio', { name: /^Tomas Reed’s: 640.0 out/ }));
 		await user.click(screen.getByRole('button', { name: 'Keep these choices' }));
 		expect(await editor.flush()).toBe(true);
 		expect(server.held.document.left.points.upperBall).toEqual([-5, 640, 520]);
@@ -84,7 +82,7 @@ describe('a conflict', () => {
 	test('is told in the strip, with who and what, and opens both', async () => {
 		await conflict();
 		const user = show(StaleStrip, { editor });
-		expect(screen.getByRole('status')).toHaveTextContent('Tomas Reed changed Upper ball joint; Static camber on');
+		expect(screen.getByRole('status')).toHaveTextContent('Tomas Reed changed upper ball joint; static camber on');
 		await user.click(screen.getByRole('button', { name: 'Show both' }));
 		expect(screen.getByRole('dialog', { name: 'Changed by two people' })).toBeInTheDocument();
 	});
@@ -93,7 +91,7 @@ describe('a conflict', () => {
 		server.otherKeeps(document((axle) => void (axle.left.wheel.camber = -1)));
 		await editor.refresh();
 		const user = show(StaleStrip, { editor });
-		expect(screen.getByRole('status')).toHaveTextContent('Tomas Reed changed Static camber');
+		expect(screen.getByRole('status')).toHaveTextContent('Tomas Reed changed static camber');
 		await user.click(screen.getByRole('button', { name: 'show both' }));
 		expect(screen.getByRole('row', { name: /Static camber 0.00° −1.00°/ })).toBeInTheDocument();
 	});

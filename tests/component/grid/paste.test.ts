@@ -21,7 +21,7 @@ function open(text: string, preferences: Partial<Preferences> = {}, datum: Datum
 	const given = { open: true, editor, selection: new Selection(), datum, text };
 	render(Frame, {
 		props: {
-			part: PasteDialog as unknown as Component<typeof given>,
+			part: PasteDialog as unknown as Component<Record<string, unknown>>,
 			given,
 			preferences: { ...DEFAULT_PREFERENCES, ...preferences }
 		}

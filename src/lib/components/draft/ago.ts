@@ -1,4 +1,6 @@
-/** How long ago, in words: "just now", "12 s ago", "5 min ago", "3 h ago", "2 days ago". Both in ms of one clock. */
+import { formatDate } from '$lib/format';
+
+/** How long ago, in words: "just now", "12 s ago", "5 min ago", "3 h ago", "on 1 Dec 2026". Both in ms of one clock. */
 export function ago(then: number, now: number): string {
 	const seconds = Math.max(0, Math.floor((now - then) / 1000));
 	if (seconds < 3) return 'just now';
@@ -7,8 +9,12 @@ export function ago(then: number, now: number): string {
 	if (minutes < 60) return `${minutes} min ago`;
 	const hours = Math.floor(minutes / 60);
 	if (hours < 24) return `${hours} h ago`;
-	const days = Math.floor(hours / 24);
-	return days === 1 ? '1 day ago' : `${days} days ago`;
+	return `on ${formatDate(then)}`;
+}
+
+/** A name at the head of a line, as it stands inside a sentence. */
+export function inSentence(name: string): string {
+	return /^[A-Z][a-z]/.test(name) ? name.charAt(0).toLowerCase() + name.slice(1) : name;
 }
 
 /** "1 edit", "3 edits". */

@@ -27,6 +27,8 @@ export interface GridRow {
 	/** The point of the drawing this row is, or null. */
 	point: PointKey | null;
 	cells: GridCell[];
+	/** Said after the unit, where a number could be taken for another: "per wheel". */
+	note?: string;
 }
 
 export interface GridGroup {
@@ -71,7 +73,7 @@ const PART: Record<PointKey, string> = {
 	lowerFront: 'front pivot',
 	lowerRear: 'rear pivot',
 	lowerBall: 'ball joint',
-	tieRodInner: 'inner, rack end',
+	tieRodInner: 'rack end',
 	tieRodOuter: 'outer joint',
 	coiloverTop: 'top',
 	coiloverBottom: 'bottom'
@@ -87,11 +89,21 @@ type CoiloverField = 'rate' | 'forceAtRide' | 'openLength' | 'closedLength';
 /** The limits of src/lib/schemas/axle.ts; tests/component/grid holds the two together. */
 type Limits = Pick<GridCell, 'quantity' | 'empties' | 'low' | 'high'>;
 
-const WHEEL: { field: WheelField; name: string; limits: Limits }[] = [
+const WHEEL: { field: WheelField; name: string; note?: string; limits: Limits }[] = [
 	{ field: 'track', name: 'track', limits: { quantity: 'length', empties: true, low: 300, high: 4000 } },
 	{ field: 'loadedRadius', name: 'loaded radius', limits: { quantity: 'length', empties: true, low: 50, high: 1000 } },
-	{ field: 'camber', name: 'static camber', limits: { quantity: 'angle', empties: false, low: -20, high: 20 } },
-	{ field: 'toe', name: 'static toe, per wheel', limits: { quantity: 'angle', empties: false, low: -20, high: 20 } }
+	{
+		field: 'camber',
+		name: 'static camber',
+		note: 'top in −',
+		limits: { quantity: 'angle', empties: false, low: -20, high: 20 }
+	},
+	{
+		field: 'toe',
+		name: 'static toe',
+		note: 'per wheel, toe-in +',
+		limits: { quantity: 'angle', empties: false, low: -20, high: 20 }
+	}
 ];
 
 const COILOVER: { field: CoiloverField; name: string; limits: Limits }[] = [
@@ -105,11 +117,11 @@ const COILOVER: { field: CoiloverField; name: string; limits: Limits }[] = [
 	{ field: 'closedLength', name: 'closed length', limits: { quantity: 'length', empties: true, low: 0, high: 5000 } }
 ];
 
-function wheelRow(side: Side, { field, name, limits }: (typeof WHEEL)[number]): GridRow {
+function wheelRow(side: Side, { field, name, note, limits }: (typeof WHEEL)[number]): GridRow {
 	const cell: GridCell = {
 		...limits,
 		key: `${side}.wheel.${field}`,
-		label: name,
+		label: field === 'toe' ? `${name}, per wheel` : name,
 		read: (document) => cornerOf(document, side)?.wheel[field] ?? null,
 		write(document, value) {
 			const wheel = cornerOf(document, side)?.wheel;
@@ -118,7 +130,7 @@ function wheelRow(side: Side, { field, name, limits }: (typeof WHEEL)[number]): 
 			else if (value !== null) wheel[field] = value;
 		}
 	};
-	return { key: `wheel.${field}`, name, label: name, point: null, cells: [cell] };
+	return { key: `wheel.${field}`, name, label: cell.label, point: null, cells: [cell], ...(note && { note }) };
 }
 
 function coiloverRow(side: Side, { field, name, limits }: (typeof COILOVER)[number]): GridRow {

@@ -1,9 +1,9 @@
-import { formatExact, formatQuantity, formatWithUnit, MINUS, NONE } from '$lib/format';
+import { formatExact, formatQuantity, formatWithUnit, MINUS, NONE, unitLabel } from '$lib/format';
 import { parseQuantity } from '$lib/parse';
 import type { AxleDocument } from '$lib/schemas/axle';
 import type { Preferences } from '$lib/schemas/preferences';
 import { fromDisplay, MM_PER_INCH } from '$lib/units';
-import type { GridCell } from './rows';
+import type { GridCell, GridRow } from './rows';
 
 /** Between stored numbers and the text of a cell, in the person's units. */
 
@@ -59,4 +59,11 @@ export function stepOf(quantity: GridCell['quantity'], preferences: Preferences)
 export function stepWords(quantity: GridCell['quantity'], preferences: Preferences): string {
 	if (quantity === 'length' && preferences.length === 'in') return '1/16 in';
 	return formatWithUnit(stepOf(quantity, preferences), quantity, preferences).replace(/[.,]0+(?=\D|$)/, '');
+}
+
+/** What stands after a lone number of a row: its unit and what the sign means. Degrees and minutes carry their own marks. */
+export function unitNote(row: GridRow, preferences: Preferences): string {
+	const quantity = row.cells[0]?.quantity ?? 'length';
+	const marked = quantity === 'angle' && preferences.angle === 'minutes';
+	return [marked ? '' : unitLabel(quantity, preferences), row.note ?? ''].filter(Boolean).join(' ');
 }
