@@ -157,6 +157,11 @@ function clearance({ points: p }: Corner): number {
 /** Any left corner of the ranges above that does not bind at ride height itself. */
 export const cornerArbitrary: fc.Arbitrary<Corner> = cornerNumbers.map(buildCorner).filter((c) => clearance(c) > 0.15);
 
+/** Corners whose pivot lines run exactly along x: seen from the front, a four-bar linkage. */
+export const squareCornerArbitrary: fc.Arbitrary<Corner> = cornerNumbers
+	.map((n) => buildCorner({ ...n, square: true }))
+	.filter((c) => clearance(c) > 0.15);
+
 /** A travel and a rack movement to try, mm. */
 export const travelArbitrary = real(-90, 90);
 export const rackArbitrary = real(-60, 60);

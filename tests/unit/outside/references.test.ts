@@ -1,6 +1,15 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { applyAlignment, solveAlignment, solveCorner, threeSpheres } from '../../../src/lib/kinematics';
+import {
+	applyAlignment,
+	KinematicsError,
+	solveAlignment,
+	solveCorner,
+	sweepBump,
+	threeSpheres
+} from '../../../src/lib/kinematics';
 import { roadCorner, shimTableCorner } from '../../fixtures/corners';
+import { rackArbitrary, squareCornerArbitrary } from '../../support/corners';
 import {
 	add,
 	cross,
@@ -16,6 +25,9 @@ import {
 	type V3
 } from '../../support/newton';
 import { attitude } from '../../support/newton-figures';
+import { runs, SEED } from '../../support/seed';
+
+console.log(`outside references: FC_SEED=${SEED}`);
 
 /** Published figures and exact closed forms; where each comes from stands beside it and in tests/fixtures/README.md. */
 
@@ -23,6 +35,16 @@ type State = ReturnType<typeof solveCorner>;
 
 function near(a: number, b: number, tolerance: number, name = ''): void {
 	if (!(Math.abs(a - b) <= tolerance)) expect.fail(`${name}: ${a} against ${b}, off ${a - b}, allowed ${tolerance}`);
+}
+
+/** The result, or nothing where the linkage does not reach. */
+function attempt<T>(act: () => T): T | null {
+	try {
+		return act();
+	} catch (error) {
+		if (error instanceof KinematicsError && error.code === 'out-of-reach') return null;
+		throw error;
+	}
 }
 
 /** Root of a rising or falling function between two bounds, by halving. */
@@ -149,6 +171,39 @@ describe('closed forms', () => {
 		near(crank(state), 40, 1e-9, 'crank');
 		near(rocker, 57.325, 0.0005, 'rocker');
 		near(rocker, open(40), 1e-8, 'rocker by loop closure');
+	});
+
+	it('any corner with pivot lines along x obeys the equation of Freudenstein in every state', () => {
+		// (d/a) cos(rocker) - (d/c) cos(crank) + (a^2 - b^2 + c^2 + d^2) / 2ac = cos(crank - rocker), from loop closure
+		// (F. Freudenstein, Transactions of the ASME 77, 1955, recalled); a crank, b coupler, c rocker, d ground.
+		const plan = (p: V3): V3 => [0, p[1], p[2]];
+		let states = 0;
+		fc.assert(
+			fc.property(squareCornerArbitrary, rackArbitrary, (corner, rack) => {
+				const lower = plan(corner.points.lowerFront);
+				const upper = plan(corner.points.upperFront);
+				const ground = sub(upper, lower);
+				const angle = (arm: V3): number => Math.atan2(cross(ground, arm)[0], dot(ground, arm));
+				const { lowerBall, upperBall } = corner.points;
+				const [a, b, c, d] = [
+					sub(plan(lowerBall), lower),
+					sub(plan(upperBall), plan(lowerBall)),
+					sub(plan(upperBall), upper),
+					ground
+				].map(norm) as [number, number, number, number];
+				const swept = attempt(() => sweepBump(corner, { from: -70, to: 70, step: 10, rack }));
+				for (const state of swept?.states ?? []) {
+					const crank = angle(sub(plan(state.points.lowerBall), lower));
+					const rocker = angle(sub(plan(state.points.upperBall), upper));
+					const left =
+						(d / a) * Math.cos(rocker) - (d / c) * Math.cos(crank) + (a * a - b * b + c * c + d * d) / (2 * a * c);
+					near(left, Math.cos(crank - rocker), 1e-11, 'loop');
+					states++;
+				}
+			}),
+			runs(300)
+		);
+		expect(states).toBeGreaterThan(3000);
 	});
 
 	it('three unit spheres about (4,1,2), (5,2,2), (5,1,3) meet at (5,1,2) and (13/3, 5/3, 8/3)', () => {
