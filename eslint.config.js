@@ -47,7 +47,7 @@ export default ts.config(
 	{
 		files: ['**/*.svelte', '**/*.svelte.ts', '**/*.svelte.js'],
 		languageOptions: {
-			parserOptions: { projectService: true, extraFileExtensions: ['.svelte'], parser: ts.parser, svelteConfig }
+			parserOptions: { extraFileExtensions: ['.svelte'], parser: ts.parser, svelteConfig }
 		},
 		rules: { 'svelte/no-at-html-tags': 'error' }
 	},
