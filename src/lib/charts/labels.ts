@@ -9,7 +9,9 @@ export interface Wanted {
  * and kept between `low` and `high` as far as they fit. Order along the row is kept by wanted place.
  */
 export function spreadLabels(wanted: readonly Wanted[], gap: number, low: number, high: number): number[] {
-	const order = wanted.map((label, index) => ({ label, index })).sort((a, b) => a.label.at - b.label.at || a.index - b.index);
+	const order = wanted
+		.map((label, index) => ({ label, index }))
+		.sort((a, b) => a.label.at - b.label.at || a.index - b.index);
 	// Pool adjacent violators: labels that touch become one block standing at the mean of what its members want.
 	interface Block {
 		members: typeof order;
@@ -19,9 +21,18 @@ export function spreadLabels(wanted: readonly Wanted[], gap: number, low: number
 	}
 	const blocks: Block[] = [];
 	for (const item of order) {
-		let block: Block = { members: [item], offsets: [item.label.size / 2], length: item.label.size, centre: item.label.at };
+		let block: Block = {
+			members: [item],
+			offsets: [item.label.size / 2],
+			length: item.label.size,
+			centre: item.label.at
+		};
 		block.centre = clampCentre(block.centre, block.length, low, high);
-		for (let last = blocks.at(-1); last && last.centre + last.length / 2 + gap > block.centre - block.length / 2; last = blocks.at(-1)) {
+		for (
+			let last = blocks.at(-1);
+			last && last.centre + last.length / 2 + gap > block.centre - block.length / 2;
+			last = blocks.at(-1)
+		) {
 			blocks.pop();
 			block = join(last, block);
 		}

@@ -16,7 +16,10 @@ export function uprightPath(
 }
 
 /** The first or last point of a curve that has a value: where its end label goes. */
-export function curveEnd(points: readonly CurvePoint[], end: 'bump' | 'droop'): { travel: number; value: number } | null {
+export function curveEnd(
+	points: readonly CurvePoint[],
+	end: 'bump' | 'droop'
+): { travel: number; value: number } | null {
 	let found: { travel: number; value: number } | null = null;
 	for (const { travel, value } of points) {
 		if (value === null) continue;
@@ -37,6 +40,6 @@ export function bandPath(
 	if (value === null) return '';
 	const at = x(value);
 	// Inward is toward the other limit; the scale may run either way.
-	const inward = (limit === 'low') === (x(1) > x(0)) ? hook : -hook;
+	const inward = (limit === 'low') === x(1) > x(0) ? hook : -hook;
 	return `M${at + inward} ${y(band.from)}H${at}V${y(band.to)}H${at + inward}`;
 }

@@ -99,7 +99,8 @@ export function readableTicks([low, high]: Domain): number[] {
 		.flatMap((p) => TICK_FACTORS.map((factor) => factor * 10 ** p))
 		.map((step) => {
 			const [first, last] = [Math.ceil(low / step - 1e-9), Math.floor(high / step + 1e-9)];
-			const ends = Number(Math.abs(first * step - low) < step * 1e-6) + Number(Math.abs(last * step - high) < step * 1e-6);
+			const ends =
+				Number(Math.abs(first * step - low) < step * 1e-6) + Number(Math.abs(last * step - high) < step * 1e-6);
 			return { step, first, count: last - first + 1, ends };
 		});
 	const good = candidates.filter(({ count }) => count >= 5 && count <= 7);
@@ -135,7 +136,8 @@ export function valueAt(points: readonly CurvePoint[], travel: number): number |
 	for (let k = 1; k < points.length; k += 1) {
 		const [a, b] = [points[k - 1], points[k]];
 		if (!a || !b || travel < Math.min(a.travel, b.travel) || travel > Math.max(a.travel, b.travel)) continue;
-		if (a.value === null || b.value === null) return travel === a.travel ? a.value : travel === b.travel ? b.value : null;
+		if (a.value === null || b.value === null)
+			return travel === a.travel ? a.value : travel === b.travel ? b.value : null;
 		const share = b.travel === a.travel ? 0 : (travel - a.travel) / (b.travel - a.travel);
 		return a.value + (b.value - a.value) * share;
 	}

@@ -2,6 +2,7 @@ import type { DrawnCorner } from './scene';
 import { tyreShape, type TyreShape } from './tyre';
 import type { MarkKey, Places } from './linkage';
 import { parseTyreSize } from '$lib/domain/tyres';
+import { MM_PER_INCH } from '$lib/units';
 import { entryOf, POINT_ORDER } from '$lib/domain/points';
 import type { CornerState, Vec3 } from '$lib/kinematics';
 import type { CornerEntry } from '$lib/schemas/axle';
@@ -17,9 +18,10 @@ const SOME_RADIUS = 300;
 export function tyreOf(loadedRadius: number | null, size: string): DrawnTyre {
 	const read = parseTyreSize(size);
 	const radius = loadedRadius ?? (read ? read.freeDiameter / 2 : SOME_RADIUS);
+	const rimRadius = read ? (read.rim * MM_PER_INCH) / 2 : null;
 	return {
 		shape: tyreShape(radius, read?.sectionWidth ?? null),
-		rimRadius: read && read.rimDiameter / 2 < radius ? read.rimDiameter / 2 : null
+		rimRadius: rimRadius !== null && rimRadius < radius ? rimRadius : null
 	};
 }
 

@@ -48,7 +48,13 @@ const roomFor = (said: DimensionText): number => textWidth(said.text) + (said.ve
  * The dimensions of one view, at most seven, each where it belongs. `outward` is the page direction away from the
  * car's centreline (+1 right). A figure without its text, or without the geometry it needs, is left out.
  */
-export function viewDimensions(view: ViewKey, scene: ViewScene, box: Box, texts: Texts, outward: 1 | -1): PlacedDimension[] {
+export function viewDimensions(
+	view: ViewKey,
+	scene: ViewScene,
+	box: Box,
+	texts: Texts,
+	outward: 1 | -1
+): PlacedDimension[] {
 	const makers: Partial<Record<DimensionKey, (room: number) => Laid | null>> =
 		view === 'front'
 			? {
@@ -60,7 +66,10 @@ export function viewDimensions(view: ViewKey, scene: ViewScene, box: Box, texts:
 					track: (room) => track(scene, box, room, outward)
 				}
 			: view === 'side'
-				? { caster: (room) => steeringAngle(scene, room, 44), mechanicalTrail: (room) => groundSpan(scene, box, room, 1) }
+				? {
+						caster: (room) => steeringAngle(scene, room, 44),
+						mechanicalTrail: (room) => groundSpan(scene, box, room, 1)
+					}
 				: view === 'top'
 					? { toe: (room) => toe(scene, box, room) }
 					: {};
@@ -92,8 +101,14 @@ function camber(scene: ViewScene, box: Box, room: number): Laid | null {
 		] as const;
 	const above = contact[1] - radius - 13;
 	// With no room over the tyre (the wheel is up in bump) the figure stands inside its outline.
-	const text: Spot = [contact[0] + radius * Math.cos((wheelLine + TO_UP) / 2), above < box.y + 14 ? contact[1] - radius + 34 : above];
-	return { layout: over(layout, text), reference: [ray(TO_UP, radius - 8, radius + 4), ray(wheelLine, radius - 8, radius + 4)] };
+	const text: Spot = [
+		contact[0] + radius * Math.cos((wheelLine + TO_UP) / 2),
+		above < box.y + 14 ? contact[1] - radius + 34 : above
+	];
+	return {
+		layout: over(layout, text),
+		reference: [ray(TO_UP, radius - 8, radius + 4), ray(wheelLine, radius - 8, radius + 4)]
+	};
 }
 
 /** Kingpin inclination (front) or caster (side): between the plumb line through the axis's foot and the axis itself. */
@@ -129,14 +144,24 @@ function groundSpan(scene: ViewScene, box: Box, room: number, side: 1 | -1): Lai
 	// Where the window ends close under the ground the dimension stands over it.
 	const under = groundY + ROW_ONE <= box.y + box.h - EDGE / 2;
 	const at = under ? groundY + ROW_ONE : groundY - ROW_ONE / 2;
-	return { layout: linearDimension({ from: axisFoot, to: contact, run: 'level', at, textWidth: room, side }), reference: [] };
+	return {
+		layout: linearDimension({ from: axisFoot, to: contact, run: 'level', at, textWidth: room, side }),
+		reference: []
+	};
 }
 
 function rollCentre(scene: ViewScene, room: number, outward: 1 | -1): Laid | null {
 	const { rollCentre: centre, groundY } = scene;
 	if (!centre || groundY === null) return null;
 	const at = centre[0] + outward * (room / 2 + 12);
-	const layout = linearDimension({ from: [centre[0] + outward * 7, centre[1]], to: [at, groundY], run: 'upright', at, textWidth: room, side: -1 });
+	const layout = linearDimension({
+		from: [centre[0] + outward * 7, centre[1]],
+		to: [at, groundY],
+		run: 'upright',
+		at,
+		textWidth: room,
+		side: -1
+	});
 	return { layout, reference: [] };
 }
 
@@ -145,7 +170,10 @@ function loadedRadius(scene: ViewScene, room: number, outward: 1 | -1): Laid | n
 	const { hub, contact, groundY } = scene;
 	if (!hub || !contact || groundY === null) return null;
 	const at = contact[0] + outward * Math.max(6, room / 2 - 4);
-	return { layout: linearDimension({ from: [at, hub[1]], to: [at, groundY], run: 'upright', at, textWidth: room }), reference: [] };
+	return {
+		layout: linearDimension({ from: [at, hub[1]], to: [at, groundY], run: 'upright', at, textWidth: room }),
+		reference: []
+	};
 }
 
 /** The whole track on a half drawing: one arrow at the contact point, the line run past the centreline as usual for a symmetrical part. */
@@ -185,7 +213,13 @@ function toe(scene: ViewScene, box: Box, room: number): Laid | null {
 	const turned = Math.abs(Math.atan2(Math.sin(forward - down), Math.cos(forward - down)));
 	const within = (scene.wheelRadius ?? 150) - 46;
 	const radius = Math.max(36, Math.min(box.y + box.h - 62 - hub[1], within, 104));
-	const layout = angularDimension({ centre: hub, radius, from: down - signed(down - forward), to: down, textWidth: room });
+	const layout = angularDimension({
+		centre: hub,
+		radius,
+		from: down - signed(down - forward),
+		to: down,
+		textWidth: room
+	});
 	const ray = (angle: number) =>
 		[hub[0], hub[1], hub[0] + (radius + 6) * Math.cos(angle), hub[1] + (radius + 6) * Math.sin(angle)] as const;
 	if (turned > 0.6) return null;

@@ -135,7 +135,8 @@ function columns(spec: SheetSpec, s: number): Columns {
 /** Whether a sheet of several views fits at s pixels a mm. */
 function fitsSheet(spec: SheetSpec, s: number): boolean {
 	const { extents: e, height } = spec;
-	const tall = 2 * MARGIN + topNeed(e) * s + ABOVE_TYRE + e.top * s + (spec.angle === 'third' ? TITLE + 20 : UNDER_GROUND);
+	const tall =
+		2 * MARGIN + topNeed(e) * s + ABOVE_TYRE + e.top * s + (spec.angle === 'third' ? TITLE + 20 : UNDER_GROUND);
 	const cell = spec.mode === 'narrow' && spec.cell === 'side' ? (e.fore + e.aft) * s : 0;
 	return columns(spec, s).beside.w >= Math.max(CHARTS_LEAST, cell) && tall <= height;
 }
@@ -166,7 +167,11 @@ function layoutSeveral(spec: SheetSpec): SheetLayout {
 	const place = (x: number): Placement => ({ x, y: groundY, pxPerMm: s });
 	const views: SheetLayout['views'] = {
 		front: { box: { ...cols.front, ...frontRow }, at: place(cols.centreX), frame: viewFrame('front', angle, sideAt) },
-		top: { box: { ...cols.front, ...topRow }, at: topPlacement(topRow, e, s, cols.centreX), frame: viewFrame('top', angle, sideAt) }
+		top: {
+			box: { ...cols.front, ...topRow },
+			at: topPlacement(topRow, e, s, cols.centreX),
+			frame: viewFrame('top', angle, sideAt)
+		}
 	};
 	const sideBox = cols.side ? { ...cols.side, ...frontRow } : spec.cell === 'side' ? beside : null;
 	if (sideBox) views.side = sideWindow(sideBox, e, place(0), viewFrame('side', angle, sideAt));
@@ -206,7 +211,11 @@ function orbitWindow(box: Box, e: Extents, hand: Hand): ViewWindow {
 	const across = 0.8 * Math.hypot(e.outboard - e.inboard, e.top, (e.fore + e.aft) * 0.8);
 	return {
 		box,
-		at: { x: box.x + box.w / 2, y: box.y + CAPTION + (box.h - CAPTION) / 2, pxPerMm: Math.min(box.w - 16, box.h - CAPTION - 12) / across },
+		at: {
+			x: box.x + box.w / 2,
+			y: box.y + CAPTION + (box.h - CAPTION) / 2,
+			pxPerMm: Math.min(box.w - 16, box.h - CAPTION - 12) / across
+		},
 		frame: viewFrame('front', 'third', hand)
 	};
 }

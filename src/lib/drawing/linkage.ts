@@ -129,10 +129,13 @@ export function coilOver(
 	const [start, middle, end] = [0.14, 0.5, 0.84];
 	const pitch = (end - start) / turns;
 	let coil = '';
-	for (let k = 0; k < turns; k += 1) coil += polyline([at(start + pitch * k, -half), at(start + pitch * (k + 1), half)]);
+	for (let k = 0; k < turns; k += 1)
+		coil += polyline([at(start + pitch * k, -half), at(start + pitch * (k + 1), half)]);
 	const seat = (along: number) => polyline([at(along, -half - 2), at(along, half + 2)]);
 	return {
-		axis: polyline([at(0, 0), at(middle, 0)]) + polyline([at(1, 0), at(0.9, 0), at(0.9, tube), at(middle, tube), at(middle, -tube), at(0.9, -tube), at(0.9, 0)]),
+		axis:
+			polyline([at(0, 0), at(middle, 0)]) +
+			polyline([at(1, 0), at(0.9, 0), at(0.9, tube), at(middle, tube), at(middle, -tube), at(0.9, -tube), at(0.9, 0)]),
 		coil,
 		seats: seat(start) + seat(end)
 	};

@@ -35,7 +35,8 @@ function hidden(at: Spot2, size: { w: number; h: number }, { marks, bars = [], t
 		for (const t of ALONG) if (inside(x1 + (x2 - x1) * t, y1 + (y2 - y1) * t, 2)) cost += 12;
 	}
 	for (const box of texts) {
-		const apart = box.x > at.x + size.w + 2 || box.x + box.w < at.x - 2 || box.y > at.y + size.h + 2 || box.y + box.h < at.y - 2;
+		const apart =
+			box.x > at.x + size.w + 2 || box.x + box.w < at.x - 2 || box.y > at.y + size.h + 2 || box.y + box.h < at.y - 2;
 		if (!apart) cost += 60;
 	}
 	return cost;
@@ -48,7 +49,13 @@ const STEP = 16;
  * Where a plate stands beside a mark: of eight places about it, near ones first, the one inside the window that hides
  * the least; up and inboard before the rest. Kept inside the window where none fits.
  */
-export function placePlate(window: Box, mark: Spot2, size: { w: number; h: number }, clear: Obstacles, inboardLeft = true): Spot2 {
+export function placePlate(
+	window: Box,
+	mark: Spot2,
+	size: { w: number; h: number },
+	clear: Obstacles,
+	inboardLeft = true
+): Spot2 {
 	const left = mark.x - CLEAR - size.w;
 	const right = mark.x + CLEAR;
 	const sides = inboardLeft ? [left, right] : [right, left];
@@ -59,7 +66,10 @@ export function placePlate(window: Box, mark: Spot2, size: { w: number; h: numbe
 		Math.max(0, window.y + 4 - y) +
 		Math.max(0, y + size.h - (window.y + window.h - 4));
 	const costs = heights.flatMap((y, row) =>
-		sides.map((x) => ({ at: { x, y }, cost: outside({ x, y }) * 10 + hidden({ x, y }, size, clear) + (row > 1 ? 8 : 0) }))
+		sides.map((x) => ({
+			at: { x, y },
+			cost: outside({ x, y }) * 10 + hidden({ x, y }, size, clear) + (row > 1 ? 8 : 0)
+		}))
 	);
 	const best = costs.reduce((kept, one) => (one.cost < kept.cost ? one : kept));
 	return {

@@ -43,7 +43,12 @@ export function viewFrame(view: Exclude<ViewKey, 'orbit'>, angle: ProjectionAngl
 
 /** The frame of the orbit view: yaw 0, pitch 0 is the front view, pitch 90 the top view. */
 export function orbitFrame({ yaw, pitch }: Orbit): Frame {
-	const [cy, sy, cp, sp] = [Math.cos(yaw * RADIAN), Math.sin(yaw * RADIAN), Math.cos(pitch * RADIAN), Math.sin(pitch * RADIAN)];
+	const [cy, sy, cp, sp] = [
+		Math.cos(yaw * RADIAN),
+		Math.sin(yaw * RADIAN),
+		Math.cos(pitch * RADIAN),
+		Math.sin(pitch * RADIAN)
+	];
 	return { right: [-sy, cy, 0], up: [-sp * cy, -sp * sy, cp], toward: [cp * cy, cp * sy, sp] };
 }
 

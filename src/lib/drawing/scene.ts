@@ -1,7 +1,16 @@
 import type { Vec3 } from '$lib/kinematics';
 import type { Segment, Spot } from './dimension';
 import type { ViewWindow } from './layout';
-import { axisAtHeight, coilOver, placeBars, placeMarks, polyline, type PlacedBar, type PlacedMark, type Places } from './linkage';
+import {
+	axisAtHeight,
+	coilOver,
+	placeBars,
+	placeMarks,
+	polyline,
+	type PlacedBar,
+	type PlacedMark,
+	type Places
+} from './linkage';
 import { project, toSheet, type Frame, type ViewKey } from './projection';
 import { tyreOutline, wheelCircle, type TyreShape } from './tyre';
 
@@ -82,7 +91,8 @@ export function viewScene(eye: Eye, at: ViewWindow['at'], corner: DrawnCorner): 
 		stub: wheel && stubEnd ? [...spot(wheel.centre), ...spot(stubEnd)] : null,
 		coil: top && bottom ? coilOver(spot(top), spot(bottom), 26 * placement.pxPerMm) : null,
 		rollCentre: corner.rollCentre === null || eye.key !== 'front' ? null : spot([0, 0, groundZ + corner.rollCentre]),
-		rollCentreByArms: corner.rollCentreByArms === null || eye.key !== 'front' ? null : spot([0, 0, groundZ + corner.rollCentreByArms]),
+		rollCentreByArms:
+			corner.rollCentreByArms === null || eye.key !== 'front' ? null : spot([0, 0, groundZ + corner.rollCentreByArms]),
 		groundY: level ? spot([0, 0, groundZ])[1] : null,
 		centreX: eye.key === 'front' || eye.key === 'top' ? spot([0, 0, 0])[0] : null,
 		wheelRadius: wheel && wheel.tyre.radius * placement.pxPerMm,
@@ -105,9 +115,14 @@ function wheelLine(frame: Frame, spin: Vec3): number | null {
 }
 
 function tyrePaths(eye: Eye, wheel: NonNullable<DrawnCorner['wheel']>, at: ViewWindow['at']): ViewScene['tyre'] {
-	const lay = (plane: readonly (readonly [number, number])[]) => polyline(plane.map((one) => toSheet(at, one)), true);
+	const lay = (plane: readonly (readonly [number, number])[]) =>
+		polyline(
+			plane.map((one) => toSheet(at, one)),
+			true
+		);
 	const edge = lay(tyreOutline(eye.frame, wheel.centre, wheel.spin, wheel.tyre));
-	const ring = (radius: number, offset: number) => lay(wheelCircle(eye.frame, wheel.centre, wheel.spin, radius, offset));
+	const ring = (radius: number, offset: number) =>
+		lay(wheelCircle(eye.frame, wheel.centre, wheel.spin, radius, offset));
 	const rim = wheel.rimRadius ?? wheel.tyre.radius * 0.7;
 	if (eye.key === 'side') return { edge, circles: ring(rim, 0) };
 	if (eye.key !== 'orbit') return { edge, circles: '' };

@@ -1,7 +1,24 @@
 import { type DimensionText, type DimensionKey, type PlacedDimension, viewDimensions } from './figures';
-import { extentsOf, layoutSheet, orbitCentre, type Extents, type SheetLayout, type SheetMode, type SheetSpec } from './layout';
+import {
+	extentsOf,
+	layoutSheet,
+	orbitCentre,
+	type Extents,
+	type SheetLayout,
+	type SheetMode,
+	type SheetSpec
+} from './layout';
 import type { MarkKey, PlacedMark } from './linkage';
-import { ORBIT_HOME, orbitFrame, zoomed, type Frame, type Hand, type Placement, type ProjectionAngle, type ViewKey } from './projection';
+import {
+	ORBIT_HOME,
+	orbitFrame,
+	zoomed,
+	type Frame,
+	type Hand,
+	type Placement,
+	type ProjectionAngle,
+	type ViewKey
+} from './projection';
 import { viewScene, type DrawnCorner, type Eye, type ViewScene } from './scene';
 
 /** A zoom of one view: k times as large, moved by (x, y) px of the sheet. */

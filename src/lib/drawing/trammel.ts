@@ -21,7 +21,12 @@ const mirrored = (point: Vec3): Vec3 => [point[0], -point[1], point[2]];
  * Reads a trammel on a pair of points. `first` and `second` are the pair on the corner in hand; `other` the same pair
  * on the other corner in true vehicle axes, or null where that corner is the mirror image.
  */
-export function readTrammel(first: Vec3, second: Vec3, other: readonly [Vec3, Vec3] | null, hand: 'left' | 'right'): TrammelReading {
+export function readTrammel(
+	first: Vec3,
+	second: Vec3,
+	other: readonly [Vec3, Vec3] | null,
+	hand: 'left' | 'right'
+): TrammelReading {
 	const [otherFirst, otherSecond] = other ?? [mirrored(first), mirrored(second)];
 	const there = distance(first, otherSecond);
 	const back = distance(otherFirst, second);
@@ -66,17 +71,35 @@ export function layTrammel(a: Spot, b: Spot, textWidth: number, textHeight = 14)
 	const at = (along: number, out: number): Spot => [a[0] + dx * along + nx * out, a[1] + dy * along + ny * out];
 	const go = (spots: Spot[], close = false) =>
 		`M${spots.map(([x, y]) => `${x.toFixed(2)} ${y.toFixed(2)}`).join('L')}${close ? 'Z' : ''}`;
-	const breakHalf = Math.min(textWidth / 2 + 5, Math.abs(dx) < 1e-6 ? Infinity : (textWidth / 2 + 5) / Math.abs(dx), Math.abs(dy) < 1e-6 ? Infinity : (textHeight / 2 + 3) / Math.abs(dy));
+	const breakHalf = Math.min(
+		textWidth / 2 + 5,
+		Math.abs(dx) < 1e-6 ? Infinity : (textWidth / 2 + 5) / Math.abs(dx),
+		Math.abs(dy) < 1e-6 ? Infinity : (textHeight / 2 + 3) / Math.abs(dy)
+	);
 	const short = length < 2 * (breakHalf + HEAD + 6);
 	const middle = length / 2;
 	const edge = (out: number): Segment[] => {
-		const runs: [number, number][] = short ? [[-OVERHANG, length + OVERHANG]] : [[-OVERHANG, middle - breakHalf], [middle + breakHalf, length + OVERHANG]];
+		const runs: [number, number][] = short
+			? [[-OVERHANG, length + OVERHANG]]
+			: [
+					[-OVERHANG, middle - breakHalf],
+					[middle + breakHalf, length + OVERHANG]
+				];
 		return runs.map(([from, to]) => [...at(from, out), ...at(to, out)]);
 	};
 	const cap = (along: number) => go([at(along, OFFSET - HALF_BEAM), at(along, OFFSET + HALF_BEAM)]);
 	const head = (along: number) =>
-		go([at(along - HEAD, OFFSET - HEAD), at(along + HEAD, OFFSET - HEAD), at(along + HEAD, OFFSET + HEAD), at(along - HEAD, OFFSET + HEAD)], true);
-	const leg = (along: number) => go([at(along - LEG, OFFSET - HEAD), at(along, 0), at(along + LEG, OFFSET - HEAD)], true);
+		go(
+			[
+				at(along - HEAD, OFFSET - HEAD),
+				at(along + HEAD, OFFSET - HEAD),
+				at(along + HEAD, OFFSET + HEAD),
+				at(along - HEAD, OFFSET + HEAD)
+			],
+			true
+		);
+	const leg = (along: number) =>
+		go([at(along - LEG, OFFSET - HEAD), at(along, 0), at(along + LEG, OFFSET - HEAD)], true);
 	const caps = [-OVERHANG, length + OVERHANG, ...(short ? [] : [middle - breakHalf, middle + breakHalf])];
 	return {
 		beam: [...edge(OFFSET - HALF_BEAM), ...edge(OFFSET + HALF_BEAM)],

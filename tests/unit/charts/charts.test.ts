@@ -1,7 +1,18 @@
 import { spreadLabels } from '$lib/charts/labels';
 import { columnsFor, layCharts, reachable, slideKey, type ChartSpec, type TravelSpec } from '$lib/charts/multiples';
 import { bandPath, curveEnd, uprightPath } from '$lib/charts/path';
-import { chartDomain, inverse, linear, readableTicks, roundOutward, seriesLook, SERIES_LOOK, tickDecimals, valueAt, type Series } from '$lib/charts/scale';
+import {
+	chartDomain,
+	inverse,
+	linear,
+	readableTicks,
+	roundOutward,
+	seriesLook,
+	SERIES_LOOK,
+	tickDecimals,
+	valueAt,
+	type Series
+} from '$lib/charts/scale';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 
@@ -15,15 +26,20 @@ const series = (values: (number | null)[]): Series => ({
 describe('scales', () => {
 	it('have five to seven ticks on any domain that a chart is given', () => {
 		fc.assert(
-			fc.property(fc.double({ min: -1e4, max: 1e4, noNaN: true }), fc.double({ min: 1e-3, max: 1e4, noNaN: true }), (low, span) => {
-				const domain = roundOutward([low, low + span]);
-				expect(domain[0]).toBeLessThanOrEqual(low + span * 1e-6);
-				expect(domain[1]).toBeGreaterThanOrEqual(low + span * (1 - 1e-6));
-				const ticks = readableTicks(domain);
-				expect(ticks.length).toBeGreaterThanOrEqual(4);
-				expect(ticks.length).toBeLessThanOrEqual(7);
-				for (const tick of ticks) expect(tick >= domain[0] - span * 1e-6 && tick <= domain[1] + span * 1e-6).toBe(true);
-			})
+			fc.property(
+				fc.double({ min: -1e4, max: 1e4, noNaN: true }),
+				fc.double({ min: 1e-3, max: 1e4, noNaN: true }),
+				(low, span) => {
+					const domain = roundOutward([low, low + span]);
+					expect(domain[0]).toBeLessThanOrEqual(low + span * 1e-6);
+					expect(domain[1]).toBeGreaterThanOrEqual(low + span * (1 - 1e-6));
+					const ticks = readableTicks(domain);
+					expect(ticks.length).toBeGreaterThanOrEqual(4);
+					expect(ticks.length).toBeLessThanOrEqual(7);
+					for (const tick of ticks)
+						expect(tick >= domain[0] - span * 1e-6 && tick <= domain[1] + span * 1e-6).toBe(true);
+				}
+			)
 		);
 	});
 
@@ -38,7 +54,10 @@ describe('scales', () => {
 	});
 
 	it('cover curves, bands and what must be inside, and never less than the least spread', () => {
-		const domain = chartDomain([series([-1, -0.8, -0.5])], [{ from: -25, to: 25, low: -2, high: null }], { least: 1, include: [0] });
+		const domain = chartDomain([series([-1, -0.8, -0.5])], [{ from: -25, to: 25, low: -2, high: null }], {
+			least: 1,
+			include: [0]
+		});
 		expect(domain?.[0]).toBeLessThanOrEqual(-2);
 		expect(domain?.[1]).toBeGreaterThanOrEqual(0);
 		const flat = chartDomain([series([3, 3, 3])], [], { least: 0.5 });
@@ -92,7 +111,10 @@ describe('curves', () => {
 });
 
 describe('end labels', () => {
-	const label = fc.record({ at: fc.double({ min: 0, max: 300, noNaN: true }), size: fc.double({ min: 5, max: 45, noNaN: true }) });
+	const label = fc.record({
+		at: fc.double({ min: 0, max: 300, noNaN: true }),
+		size: fc.double({ min: 5, max: 45, noNaN: true })
+	});
 
 	it('never overlap, keep their order, and stay in the row where they fit', () => {
 		fc.assert(
@@ -105,17 +127,38 @@ describe('end labels', () => {
 					expect(one.place - one.size / 2).toBeGreaterThanOrEqual(before.place + before.size / 2 + 4 - 1e-6);
 					expect(one.at).toBeGreaterThanOrEqual(before.at - 1e-9);
 				});
-				for (const one of order) expect(one.place - one.size / 2 >= -1e-6 && one.place + one.size / 2 <= 320 + 1e-6).toBe(true);
+				for (const one of order)
+					expect(one.place - one.size / 2 >= -1e-6 && one.place + one.size / 2 <= 320 + 1e-6).toBe(true);
 			})
 		);
 	});
 
 	it('stay where they want to be when they are apart', () => {
-		expect(spreadLabels([{ at: 200, size: 20 }, { at: 50, size: 20 }], 4, 0, 300)).toEqual([200, 50]);
+		expect(
+			spreadLabels(
+				[
+					{ at: 200, size: 20 },
+					{ at: 50, size: 20 }
+				],
+				4,
+				0,
+				300
+			)
+		).toEqual([200, 50]);
 	});
 
 	it('move apart evenly about what they want', () => {
-		expect(spreadLabels([{ at: 100, size: 20 }, { at: 100, size: 20 }], 4, 0, 300)).toEqual([88, 112]);
+		expect(
+			spreadLabels(
+				[
+					{ at: 100, size: 20 },
+					{ at: 100, size: 20 }
+				],
+				4,
+				0,
+				300
+			)
+		).toEqual([88, 112]);
 	});
 });
 
@@ -149,7 +192,16 @@ describe('the travel slide', () => {
 
 it('small multiples stand three, two or one across, each as wide as the others', () => {
 	expect([1168, 720, 358].map(columnsFor)).toEqual([3, 2, 1]);
-	const spec: ChartSpec = { key: 'k', label: 'camber', unit: '°', series: [series([1, 2])], bands: [], rule: { least: 1 }, format: String, cursorValue: 1 };
+	const spec: ChartSpec = {
+		key: 'k',
+		label: 'camber',
+		unit: '°',
+		series: [series([1, 2])],
+		bands: [],
+		rule: { least: 1 },
+		format: String,
+		cursorValue: 1
+	};
 	const laid = layCharts([spec, { ...spec, key: 'l' }, { ...spec, key: 'm' }], 60, 600);
 	const widths = laid.map(({ left, right }) => right - left);
 	expect(new Set(widths.map((width) => width.toFixed(6))).size).toBe(1);

@@ -42,11 +42,14 @@ describe('a level dimension', () => {
 	});
 
 	it('has no extension line where the object lies on the dimension line', () => {
-		expect(linearDimension({ from: [0, 10], to: [200, 10], run: 'level', at: 10, textWidth: 20 }).extension).toEqual([]);
+		expect(linearDimension({ from: [0, 10], to: [200, 10], run: 'level', at: 10, textWidth: 20 }).extension).toEqual(
+			[]
+		);
 	});
 
 	it('changes sides exactly where figure, arrows and a stub of line no longer fit', () => {
-		const span = (length: number) => linearDimension({ from: [0, 0], to: [length, 0], run: 'level', at: 20, textWidth: 40 }).outside;
+		const span = (length: number) =>
+			linearDimension({ from: [0, 0], to: [length, 0], run: 'level', at: 20, textWidth: 40 }).outside;
 		expect(span(76)).toBe(false);
 		expect(span(75.9)).toBe(true);
 	});
@@ -64,7 +67,13 @@ it('an upright dimension keeps its figure level and needs only its height', () =
 
 describe('an angle', () => {
 	it('is an arc broken about its figure where it is long enough', () => {
-		const wide = angularDimension({ centre: [0, 0], radius: 200, from: -Math.PI / 2 - 0.6, to: -Math.PI / 2, textWidth: 40 });
+		const wide = angularDimension({
+			centre: [0, 0],
+			radius: 200,
+			from: -Math.PI / 2 - 0.6,
+			to: -Math.PI / 2,
+			textWidth: 40
+		});
 		expect(wide.outside).toBe(false);
 		expect(wide.arcs).toHaveLength(2);
 		expect(Math.hypot(wide.text.x, wide.text.y)).toBeCloseTo(200, 9);

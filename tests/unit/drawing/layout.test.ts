@@ -13,11 +13,20 @@ const places = {
 	tieRodOuter: [-128, 632, 222] as const
 };
 const extents = extentsOf(places, { centre: [0, 710, 290], tyre: { radius: 290, width: 185, shoulder: 30 } });
-const at1440: SheetSpec = { width: 1224, height: 852, mode: 'full', angle: 'third', hand: 'left', extents, cell: 'curves' };
+const at1440: SheetSpec = {
+	width: 1224,
+	height: 852,
+	mode: 'full',
+	angle: 'third',
+	hand: 'left',
+	extents,
+	cell: 'curves'
+};
 
 const inside = (box: Box, { width, height }: SheetSpec) =>
 	box.x >= -1e-9 && box.y >= -1e-9 && box.x + box.w <= width + 1e-9 && box.y + box.h <= height + 1e-9;
-const apart = (a: Box, b: Box) => a.x + a.w <= b.x + 1e-6 || b.x + b.w <= a.x + 1e-6 || a.y + a.h <= b.y + 1e-6 || b.y + b.h <= a.y + 1e-6;
+const apart = (a: Box, b: Box) =>
+	a.x + a.w <= b.x + 1e-6 || b.x + b.w <= a.x + 1e-6 || a.y + a.h <= b.y + 1e-6 || b.y + b.h <= a.y + 1e-6;
 
 describe('a sheet of several views', () => {
 	const specs: SheetSpec[] = (['third', 'first'] as const).flatMap((angle) =>
@@ -77,21 +86,26 @@ describe('a sheet of several views', () => {
 				const u = view.frame.right.reduce((sum, value, k) => sum + value * (point[k] ?? 0), 0);
 				const v = view.frame.up.reduce((sum, value, k) => sum + value * (point[k] ?? 0), 0);
 				const [x, y] = [view.at.x + u * view.at.pxPerMm, view.at.y - v * view.at.pxPerMm];
-				expect(x > view.box.x && x < view.box.x + view.box.w && y > view.box.y && y < view.box.y + view.box.h).toBe(true);
+				expect(x > view.box.x && x < view.box.x + view.box.w && y > view.box.y && y < view.box.y + view.box.h).toBe(
+					true
+				);
 			}
 		}
 	});
 });
 
-it.each(['front', 'top', 'side', 'orbit', 'curves'] as const)('one thing at a time fills a narrow sheet: %s', (cell) => {
-	for (const width of [390, 768]) {
-		const spec: SheetSpec = { ...at1440, mode: 'single', width, height: width < 560 ? 380 : 520, cell };
-		const layout = layoutSheet(spec);
-		expect(Object.keys(layout.views)).toEqual(cell === 'curves' ? [] : [cell]);
-		expect(layout.charts === null).toBe(cell !== 'curves');
-		expect(inside(layout.title, spec)).toBe(true);
+it.each(['front', 'top', 'side', 'orbit', 'curves'] as const)(
+	'one thing at a time fills a narrow sheet: %s',
+	(cell) => {
+		for (const width of [390, 768]) {
+			const spec: SheetSpec = { ...at1440, mode: 'single', width, height: width < 560 ? 380 : 520, cell };
+			const layout = layoutSheet(spec);
+			expect(Object.keys(layout.views)).toEqual(cell === 'curves' ? [] : [cell]);
+			expect(layout.charts === null).toBe(cell !== 'curves');
+			expect(inside(layout.title, spec)).toBe(true);
+		}
 	}
-});
+);
 
 it('the room a corner takes moves in steps of 20 mm, so that small edits leave the sheet still', () => {
 	const wheel = { centre: [0, 710, 290] as const, tyre: { radius: 290, width: 185, shoulder: 30 } };

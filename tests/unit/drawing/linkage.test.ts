@@ -11,7 +11,11 @@ const at = { x: 100, y: 500, pxPerMm: 0.5 };
 
 describe('bars and marks', () => {
 	it('a bar is drawn when both of its marks have a place', () => {
-		const bars = placeBars(front, at, { lowerBall: [0, 600, 200], upperBall: [0, 600, 480], upperFront: [90, 340, 450] });
+		const bars = placeBars(front, at, {
+			lowerBall: [0, 600, 200],
+			upperBall: [0, 600, 480],
+			upperFront: [90, 340, 450]
+		});
 		expect(bars.map(({ key }) => key)).toEqual(['upperArmFront', 'upright']);
 		expect(bars[1]?.segment).toEqual([400, 400, 400, 260]);
 		expect(placeBars(front, at, {})).toEqual([]);
@@ -85,23 +89,30 @@ describe('the trammel', () => {
 
 	it('is drawn with its legs on the two points and the figure in a break of the beam', () => {
 		fc.assert(
-			fc.property(fc.double({ min: -3.1, max: 3.1, noNaN: true }), fc.double({ min: 120, max: 500, noNaN: true }), (angle, length) => {
-				const from = [300, 300] as const;
-				const to = [300 + length * Math.cos(angle), 300 + length * Math.sin(angle)] as const;
-				const laid = layTrammel(from, to, 40);
-				const tips = [...laid.legs.matchAll(/M[^L]+L(-?[\d.]+) (-?[\d.]+)L/g)].map((match) => [Number(match[1]), Number(match[2])]);
-				expect(tips).toHaveLength(2);
-				expect(tips[0]?.[0]).toBeCloseTo(from[0], 1);
-				expect(tips[1]?.[1]).toBeCloseTo(to[1], 1);
-				expect(laid.short).toBe(false);
-				// No edge of the beam runs through the figure.
-				for (const [x1, y1, x2, y2] of laid.beam) {
-					for (const t of [0, 0.25, 0.5, 0.75, 1]) {
-						const [x, y] = [x1 + (x2 - x1) * t, y1 + (y2 - y1) * t];
-						expect(Math.abs(x - laid.text[0]) < 19.9 && Math.abs(y - laid.text[1]) < 6.9).toBe(false);
+			fc.property(
+				fc.double({ min: -3.1, max: 3.1, noNaN: true }),
+				fc.double({ min: 120, max: 500, noNaN: true }),
+				(angle, length) => {
+					const from = [300, 300] as const;
+					const to = [300 + length * Math.cos(angle), 300 + length * Math.sin(angle)] as const;
+					const laid = layTrammel(from, to, 40);
+					const tips = [...laid.legs.matchAll(/M[^L]+L(-?[\d.]+) (-?[\d.]+)L/g)].map((match) => [
+						Number(match[1]),
+						Number(match[2])
+					]);
+					expect(tips).toHaveLength(2);
+					expect(tips[0]?.[0]).toBeCloseTo(from[0], 1);
+					expect(tips[1]?.[1]).toBeCloseTo(to[1], 1);
+					expect(laid.short).toBe(false);
+					// No edge of the beam runs through the figure.
+					for (const [x1, y1, x2, y2] of laid.beam) {
+						for (const t of [0, 0.25, 0.5, 0.75, 1]) {
+							const [x, y] = [x1 + (x2 - x1) * t, y1 + (y2 - y1) * t];
+							expect(Math.abs(x - laid.text[0]) < 19.9 && Math.abs(y - laid.text[1]) < 6.9).toBe(false);
+						}
 					}
 				}
-			})
+			)
 		);
 	});
 
@@ -123,10 +134,14 @@ describe('plates', () => {
 
 	it('stay inside the window wherever the mark is', () => {
 		fc.assert(
-			fc.property(fc.double({ min: -50, max: 550, noNaN: true }), fc.double({ min: -50, max: 450, noNaN: true }), (x, y) => {
-				const spot = placePlate(window, { x, y }, size, { marks: [] });
-				expect(spot.x >= 0 && spot.y >= 0 && spot.x + size.w <= 500 && spot.y + size.h <= 400).toBe(true);
-			})
+			fc.property(
+				fc.double({ min: -50, max: 550, noNaN: true }),
+				fc.double({ min: -50, max: 450, noNaN: true }),
+				(x, y) => {
+					const spot = placePlate(window, { x, y }, size, { marks: [] });
+					expect(spot.x >= 0 && spot.y >= 0 && spot.x + size.w <= 500 && spot.y + size.h <= 400).toBe(true);
+				}
+			)
 		);
 	});
 

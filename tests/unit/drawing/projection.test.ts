@@ -19,7 +19,11 @@ import { describe, expect, it } from 'vitest';
 // Values follow from the definitions of first- and third-angle projection (ISO 5456-2) and the body axes
 // x forward, y left, z up; none is taken from the code.
 
-const cross = (a: Vec3, b: Vec3): Vec3 => [a[1] * b[2] - a[2] * b[1], a[2] * b[0] - a[0] * b[2], a[0] * b[1] - a[1] * b[0]];
+const cross = (a: Vec3, b: Vec3): Vec3 => [
+	a[1] * b[2] - a[2] * b[1],
+	a[2] * b[0] - a[0] * b[2],
+	a[0] * b[1] - a[1] * b[0]
+];
 const ANGLES: ProjectionAngle[] = ['third', 'first'];
 const HANDS: Hand[] = ['left', 'right'];
 
@@ -42,7 +46,9 @@ describe('frames of the views', () => {
 	it('share an axis: front and top the one across, front and side the one up', () => {
 		const point: Vec3 = [-120, 640, 310];
 		for (const angle of ANGLES) {
-			const [front, top, side] = (['front', 'top', 'side'] as const).map((view) => project(viewFrame(view, angle, 'left'), point));
+			const [front, top, side] = (['front', 'top', 'side'] as const).map((view) =>
+				project(viewFrame(view, angle, 'left'), point)
+			);
 			expect(front).toEqual([640, 310]);
 			expect(top?.[0]).toBe(640);
 			expect(side?.[1]).toBe(310);
@@ -65,7 +71,8 @@ describe('frames of the views', () => {
 
 	it('make the orbit view the front view at yaw 0 and the top view at pitch 90', () => {
 		const point: Vec3 = [33, 620, 480];
-		const near = (a: readonly number[], b: readonly number[]) => a.forEach((value, k) => expect(value).toBeCloseTo(b[k] ?? NaN, 9));
+		const near = (a: readonly number[], b: readonly number[]) =>
+			a.forEach((value, k) => expect(value).toBeCloseTo(b[k] ?? NaN, 9));
 		near(project(orbitFrame({ yaw: 0, pitch: 0 }), point), project(viewFrame('front', 'third', 'left'), point));
 		near(project(orbitFrame({ yaw: 0, pitch: 90 }), point), project(viewFrame('top', 'third', 'left'), point));
 	});

@@ -28,7 +28,8 @@ describe('the seen edge of a tyre', () => {
 	});
 
 	it('is a circle of the loaded radius, seen along the axle', () => {
-		for (const [u, v] of tyreOutline(side, centre, [0, 1, 0], shape)) expect(Math.hypot(u - 0, v - 290)).toBeCloseTo(290, 4);
+		for (const [u, v] of tyreOutline(side, centre, [0, 1, 0], shape))
+			expect(Math.hypot(u - 0, v - 290)).toBeCloseTo(290, 4);
 	});
 
 	it('has its tread as a straight line between the shoulders', () => {
@@ -52,12 +53,16 @@ describe('the seen edge of a tyre', () => {
 					const axis = Math.atan2(dot(spin, frame.up), dot(spin, frame.right));
 					// Along the sampled directions the reach is exact; between them it is short by the chord.
 					const angle = axis + (step * Math.PI) / 36;
-					const d: Vec3 = [0, 1, 2].map((k) => (frame.right[k] ?? 0) * Math.cos(angle) + (frame.up[k] ?? 0) * Math.sin(angle)) as unknown as Vec3;
+					const d: Vec3 = [0, 1, 2].map(
+						(k) => (frame.right[k] ?? 0) * Math.cos(angle) + (frame.up[k] ?? 0) * Math.sin(angle)
+					) as unknown as Vec3;
 					const along = dot(spin, d);
 					const reach = Math.abs(along) * (92.5 - 30) + 260 * Math.sqrt(Math.max(0, 1 - along * along)) + 30;
 					const [cu, cv] = [dot(frame.right, centre), dot(frame.up, centre)];
 					const found = Math.max(
-						...tyreOutline(frame, centre, spin, shape).map(([u, v]) => (u - cu) * Math.cos(angle) + (v - cv) * Math.sin(angle))
+						...tyreOutline(frame, centre, spin, shape).map(
+							([u, v]) => (u - cu) * Math.cos(angle) + (v - cv) * Math.sin(angle)
+						)
 					);
 					expect(found).toBeCloseTo(reach, 3);
 				}

@@ -68,7 +68,15 @@ export function bandText({ low, high, figure }: Target, preferences: Preferences
 	return low !== null ? `at least ${shown(low)}` : high !== null ? `at most ${shown(high)}` : NONE;
 }
 
-const bumpSteer: Target = { figure: 'bumpSteer', at: 'travel', from: -BUMP_SPAN, to: BUMP_SPAN, measure: 'peak', low: null, high: null };
+const bumpSteer: Target = {
+	figure: 'bumpSteer',
+	at: 'travel',
+	from: -BUMP_SPAN,
+	to: BUMP_SPAN,
+	measure: 'peak',
+	low: null,
+	high: null
+};
 
 /** The list's lines. `now` is the state at the travel slide. */
 export function figureRows(solved: Solved, now: CornerState, preferences: Preferences): FigureRow[] {

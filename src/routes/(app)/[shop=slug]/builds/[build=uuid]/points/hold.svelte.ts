@@ -55,7 +55,8 @@ export class Hold {
 	/** A press in a view. True when it is ours: on a point, or anywhere in the orbit view. */
 	press(view: ViewKey, x: number, y: number, pointer: number, reach: number): boolean {
 		const { model, selection } = this.#source;
-		const again = Math.hypot(x - this.#lastPress.x, y - this.#lastPress.y) < 4 && selection.point === this.#lastPress.key;
+		const again =
+			Math.hypot(x - this.#lastPress.x, y - this.#lastPress.y) < 4 && selection.point === this.#lastPress.key;
 		const key = this.under(view, x, y, reach, again);
 		this.#lastPress = { key, x, y };
 		if (key !== null && model.measuring) {
@@ -64,7 +65,15 @@ export class Hold {
 		}
 		if (key !== null) selection.choose(key);
 		if (key === null && view !== 'orbit') return false;
-		this.#held = { view, key, pointer, x, y, start: key && view !== 'orbit' ? model.entry(key) : null, dragging: false };
+		this.#held = {
+			view,
+			key,
+			pointer,
+			x,
+			y,
+			start: key && view !== 'orbit' ? model.entry(key) : null,
+			dragging: false
+		};
 		return true;
 	}
 
@@ -120,7 +129,13 @@ export class Hold {
 		if (!view || !held.start || !held.key) return;
 		let [du, dv] = [(latest.x - held.x) / view.at.pxPerMm, (held.y - latest.y) / view.at.pxPerMm];
 		if (latest.level) [du, dv] = Math.abs(du) > Math.abs(dv) ? [du, 0] : [0, dv];
-		const to = movedTo(held.start, unprojectMove(view.eye.frame, [du, dv]), stepMm(latest.fine, preferences), build.datum, model.hand);
+		const to = movedTo(
+			held.start,
+			unprojectMove(view.eye.frame, [du, dv]),
+			stepMm(latest.fine, preferences),
+			build.datum,
+			model.hand
+		);
 		const { key } = held;
 		editor.dragTo((document) => writePlace(document, model.hand, key, to));
 	}

@@ -218,9 +218,9 @@ export class PointsModel {
 	}
 
 	/** Bars, arms and marks at fault. */
-	readonly miss: ReadonlySet<string> = $derived.by(() => {
+	readonly miss: readonly string[] = $derived.by(() => {
 		const { error } = this.#source.solution;
-		return new Set([error?.at, error?.locks].filter((name) => name !== undefined));
+		return [error?.at, error?.locks].filter((name) => name !== undefined);
 	});
 
 	readonly dimensions: Partial<Record<DimensionKey, DimensionText>> = $derived.by(() => {
@@ -311,7 +311,9 @@ export class PointsModel {
 	chart(key: FigureKey): ChartSpec | null {
 		const { state } = this;
 		const { editor, preferences } = this.#source;
-		return state && this.#curved.length ? curveSpec(key, this.#curved, state, editor.document.targets, preferences) : null;
+		return state && this.#curved.length
+			? curveSpec(key, this.#curved, state, editor.document.targets, preferences)
+			: null;
 	}
 
 	/** What stands at the end of the curve in hand. */
