@@ -11,7 +11,7 @@ export type Warning =
 	| { readonly code: 'packBelowNothing'; readonly end: End; readonly wanted: number }
 	| { readonly code: 'packOverLimit'; readonly end: End; readonly wanted: number; readonly limit: number }
 	| { readonly code: 'difference'; readonly wanted: number; readonly limit: number }
-	| { readonly code: 'bolt'; readonly end: End; readonly growth: number; readonly reserve: number }
+	| { readonly code: 'bolt'; readonly end: End; readonly left: number; readonly least: number }
 	| { readonly code: 'boltUnknown' }
 	| {
 			readonly code: 'engagement';
@@ -24,6 +24,15 @@ export type Warning =
 	| { readonly code: 'threadUnknown'; readonly thread: string }
 	| { readonly code: 'stockEmpty' }
 	| { readonly code: 'unproved' };
+
+/** Two and a half threads of 1.75 mm pitch, mm: two service manuals ask two to two and a half threads past the nut. */
+export const LEAST_PAST_NUT = 2.5 * 1.75;
+
+/** Thread past the nut with a pack of that thickness, mm: what was there with the pack as entered, less the growth. */
+export function threadPastNut(upper: Extract<UpperAdjuster, { kind: 'shim' }>, end: End, pack: number): number | null {
+	const entered = end === 'front' ? upper.frontNow : upper.rearNow;
+	return upper.boltReserve === null ? null : upper.boltReserve - (pack - entered);
+}
 
 const ENDS: readonly End[] = ['front', 'rear'];
 const ROUNDING = 1e-6;
@@ -57,14 +66,16 @@ function ofPacks(
 	if (difference > upper.maxDifference + ROUNDING) {
 		warnings.push({ code: 'difference', wanted: difference, limit: upper.maxDifference });
 	}
-	const { boltReserve } = upper;
 	const ends = ENDS.map((end) => [end, chosen?.[end]] as const).filter((one): one is [End, EndSetting] => !!one[1]);
-	for (const [end, { growth }] of ends) {
-		if (boltReserve !== null && growth > boltReserve + ROUNDING) {
-			warnings.push({ code: 'bolt', end, growth, reserve: boltReserve });
+	for (const [end, { pack }] of ends) {
+		const left = pack && threadPastNut(upper, end, pack.thickness);
+		if (left !== null && left < LEAST_PAST_NUT - ROUNDING) {
+			warnings.push({ code: 'bolt', end, left, least: LEAST_PAST_NUT });
 		}
 	}
-	if (boltReserve === null && ends.some(([, { growth }]) => growth > ROUNDING)) warnings.push({ code: 'boltUnknown' });
+	if (upper.boltReserve === null && ends.some(([, { growth }]) => growth > ROUNDING)) {
+		warnings.push({ code: 'boltUnknown' });
+	}
 	if (chosen && ends.every(([, { pack }]) => pack?.pieces === 0) && (exact?.front || exact?.rear)) {
 		warnings.push({ code: 'stockEmpty' });
 	}
