@@ -70,33 +70,40 @@ export async function keepRevision(
 		const draft = await Draft.findOne({ where: { shopId, buildId }, transaction, lock: true });
 		if (!draft) refuseUnknown();
 		if (draft.version !== input.draftVersion) await refuseStale(actor, buildId, transaction);
-		const document = readDocument(draft.document);
-		solveDocument(document);
-		const bytes = canonical(document);
-		const number =
-			((await Revision.max<number | null, Revision>('number', { where: { shopId, buildId }, transaction })) ?? 0) + 1;
-		await Revision.create(
-			{
-				id: newId(),
-				shopId,
-				buildId,
-				number,
-				parentNumber: draft.parentNumber,
-				note: input.note,
-				document: bytes,
-				hash: sha256(bytes),
-				requestId: input.requestId,
-				createdAt: new Date(),
-				createdBy: actor.personId
-			},
-			{ transaction }
-		);
+		const number = await addRevision(actor, draft, input, transaction);
 		await draft.update({ parentNumber: number }, { transaction });
 		return { number, created: true };
 	});
 	const letter = revisionLetter(number);
 	if (created) await note(actor, 'revision.kept', { buildId, detail: letter });
 	return { revision: await readSummary(actor, buildId, letter), created };
+}
+
+/** Adds the draft's document as the next revision; gives its number. */
+async function addRevision(actor: Actor, draft: Draft, input: KeepInput, transaction: Transaction): Promise<number> {
+	const { shopId, buildId, parentNumber } = draft;
+	const document = readDocument(draft.document);
+	solveDocument(document);
+	const bytes = canonical(document);
+	const last = await Revision.max<number | null, Revision>('number', { where: { shopId, buildId }, transaction });
+	const number = (last ?? 0) + 1;
+	await Revision.create(
+		{
+			id: newId(),
+			shopId,
+			buildId,
+			number,
+			parentNumber,
+			note: input.note,
+			document: bytes,
+			hash: sha256(bytes),
+			requestId: input.requestId,
+			createdAt: new Date(),
+			createdBy: actor.personId
+		},
+		{ transaction }
+	);
+	return number;
 }
 
 /** Replaces the draft by a revision's document, which becomes its parent; 409 when `version` is not the draft's. */
