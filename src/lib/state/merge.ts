@@ -36,6 +36,19 @@ function divisible(values: unknown[]): values is Record<string, unknown>[] {
 	return values.every(isObject) && new Set(values.map((value) => value.kind)).size === 1;
 }
 
+/**
+ * Mine with what I had not typed yet, and the other has, filled in: an empty coordinate is nothing to disagree about.
+ * Only lists (points) have such places.
+ */
+function filled(base: unknown, mine: unknown, theirs: unknown): unknown {
+	if (!Array.isArray(base) || !Array.isArray(mine) || !Array.isArray(theirs) || base.length !== mine.length)
+		return mine;
+	const untyped = (place: number) => mine[place] === null && base[place] === null;
+	return mine.some((_, place) => untyped(place))
+		? mine.map((value: unknown, place) => (untyped(place) ? theirs[place] : value))
+		: mine;
+}
+
 interface Found {
 	conflicts: Conflict[];
 	taken: Path[];
@@ -57,8 +70,10 @@ function mergeAt(base: unknown, mine: unknown, theirs: unknown, path: Path, foun
 		found.taken.push(path);
 		return theirs;
 	}
-	found.conflicts.push({ path, base, mine, theirs });
-	return mine;
+	const [ours, others] = [filled(base, mine, theirs), filled(base, theirs, mine)];
+	if (same(ours, others)) found.taken.push(path);
+	else found.conflicts.push({ path, base, mine: ours, theirs: others });
+	return ours;
 }
 
 /**

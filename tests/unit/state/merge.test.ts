@@ -18,6 +18,18 @@ describe('three-way merge', () => {
 		expect(taken).toEqual([]);
 	});
 
+	test('coordinates not typed yet are filled from the other; only what both typed is disagreed about', () => {
+		const empty = { points: { a: [null, null, null], b: [null, 5, null] } };
+		const mine = { points: { a: [null, 640, null], b: [1, 5, null] } };
+		const theirs = { points: { a: [-22, 618, 474], b: [null, 5, 3] } };
+		const { merged, conflicts, taken } = mergeThreeWay<object>(empty, mine, theirs);
+		expect(merged).toEqual({ points: { a: [-22, 640, 474], b: [1, 5, 3] } });
+		expect(conflicts).toEqual([
+			{ path: ['points', 'a'], base: [null, null, null], mine: [-22, 640, 474], theirs: [-22, 618, 474] }
+		]);
+		expect(taken).toEqual([['points', 'b']]);
+	});
+
 	test('the same change by both is no conflict and nothing to tell', () => {
 		const changed = { ...base, left: { ...base.left, track: 1500 } };
 		expect(mergeThreeWay(base, changed, structuredClone(changed))).toEqual({
