@@ -1,3 +1,4 @@
+import { axleHash } from '../domain/axle';
 import type { AxleDocument } from '../schemas/axle';
 import type { RevisionFull } from '../schemas/build';
 import type { Actor } from './actor';
@@ -30,7 +31,7 @@ export async function chosenRevision(
 	return newest ? readRevision(actor, buildId, newest.letter) : null;
 }
 
-/** The two to four geometries named by `?revs=B,C,draft`; without one the newest revision and the draft, or the newest two. */
+/** The two to four geometries named by `?revs=B,C,draft`; without one the newest revision and the draft, or, where the draft is that revision or not to be seen, the newest two. */
 export async function comparedRevisions(actor: Actor, buildId: string, names: string | null): Promise<Compared[]> {
 	const wanted = names
 		? [
@@ -50,9 +51,15 @@ export async function comparedRevisions(actor: Actor, buildId: string, names: st
 	);
 }
 
+/** Older first, since differences count from the first. */
 async function proposed(actor: Actor, buildId: string): Promise<string[]> {
-	const letters = (await listRevisions(actor, buildId)).map(({ letter }) => letter);
-	return can(actor.role, 'draft.read') ? ['draft', ...letters.slice(0, 1)] : letters.slice(0, 2);
+	const [newest, before] = await listRevisions(actor, buildId);
+	const kept = [before, newest].filter((one) => one !== undefined).map(({ letter }) => letter);
+	if (!can(actor.role, 'draft.read')) return kept;
+	// A draft that nobody has touched since its revision would be compared with itself.
+	const { document } = await readDraft(actor, buildId);
+	const touched = !newest || (await axleHash(document)) !== newest.hash;
+	return touched || !before ? [...kept.slice(-1), 'draft'] : kept;
 }
 
 async function readComparedDraft(actor: Actor, buildId: string): Promise<Compared> {
