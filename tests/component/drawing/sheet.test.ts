@@ -31,6 +31,7 @@ beforeAll(() => {
 		}
 	);
 	vi.spyOn(HTMLElement.prototype, 'clientWidth', 'get').mockReturnValue(1224);
+	Object.defineProperty(SVGElement.prototype, 'getScreenCTM', { configurable: true, value: () => null });
 	vi.spyOn(HTMLElement.prototype, 'clientHeight', 'get').mockReturnValue(852);
 });
 
