@@ -1,6 +1,6 @@
 import type { Vec3 } from '$lib/kinematics';
 import type { Segment, Spot } from './dimension';
-import type { ViewWindow } from './layout';
+import type { Box, ViewWindow } from './layout';
 import {
 	axisAtHeight,
 	coilOver,
@@ -11,7 +11,7 @@ import {
 	type PlacedMark,
 	type Places
 } from './linkage';
-import { project, toSheet, type Frame, type ViewKey } from './projection';
+import { project, toSheet, type Frame, type Plane, type ViewKey } from './projection';
 import { tyreOutline, wheelCircle, type TyreShape } from './tyre';
 
 /** A corner as the drawing needs it: places of the marks, and the wheel where the geometry is complete. */
@@ -27,7 +27,8 @@ export interface DrawnCorner {
 export interface ViewScene {
 	bars: PlacedBar[];
 	marks: PlacedMark[];
-	tyre: { edge: string; circles: string } | null;
+	/** With the room it takes, so that a window that cuts it can say so. */
+	tyre: { edge: string; circles: string; x1: number; x2: number; y1: number; y2: number } | null;
 	/** Wheel centre, contact point, and where the steering axis meets the ground. */
 	hub: Spot | null;
 	contact: Spot | null;
@@ -115,17 +116,42 @@ function wheelLine(frame: Frame, spin: Vec3): number | null {
 }
 
 function tyrePaths(eye: Eye, wheel: NonNullable<DrawnCorner['wheel']>, at: ViewWindow['at']): ViewScene['tyre'] {
-	const lay = (plane: readonly (readonly [number, number])[]) =>
-		polyline(
-			plane.map((one) => toSheet(at, one)),
-			true
-		);
-	const edge = lay(tyreOutline(eye.frame, wheel.centre, wheel.spin, wheel.tyre));
+	const lay = (plane: readonly Plane[]) => plane.map((one) => toSheet(at, one));
+	const outline = lay(tyreOutline(eye.frame, wheel.centre, wheel.spin, wheel.tyre));
+	const [xs, ys] = [outline.map(([x]) => x), outline.map(([, y]) => y)];
+	const room = { x1: Math.min(...xs), x2: Math.max(...xs), y1: Math.min(...ys), y2: Math.max(...ys) };
 	const ring = (radius: number, offset: number) =>
-		lay(wheelCircle(eye.frame, wheel.centre, wheel.spin, radius, offset));
+		polyline(lay(wheelCircle(eye.frame, wheel.centre, wheel.spin, radius, offset)), true);
 	const rim = wheel.rimRadius ?? wheel.tyre.radius * 0.7;
-	if (eye.key === 'side') return { edge, circles: ring(rim, 0) };
-	if (eye.key !== 'orbit') return { edge, circles: '' };
+	const edge = polyline(outline, true);
+	if (eye.key === 'side') return { edge, circles: ring(rim, 0), ...room };
+	if (eye.key !== 'orbit') return { edge, circles: '', ...room };
 	const half = wheel.tyre.width / 2 - wheel.tyre.shoulder / 2;
-	return { edge, circles: ring(rim, half) + ring(rim, -half) };
+	return { edge, circles: ring(rim, half) + ring(rim, -half), ...room };
+}
+
+/** How far a break line stands in from the window's edge, and past the outline it breaks (px). */
+const BREAK_INSET = 7;
+const BREAK_PAST = 9;
+
+/**
+ * Break lines across a tyre that a window cuts off at its top or foot, as a draughtsman marks a part that runs on:
+ * level lines with one zigzag. Gives their path data and the window left between them; null where nothing is cut.
+ */
+export function tyreBreaks(tyre: NonNullable<ViewScene['tyre']>, box: Box): { path: string; top: number; foot: number } | null {
+	const cutTop = tyre.y1 < box.y;
+	const cutFoot = tyre.y2 > box.y + box.h;
+	if (!cutTop && !cutFoot) return null;
+	const middle = (tyre.x1 + tyre.x2) / 2;
+	const line = (y: number) =>
+		polyline([
+			[tyre.x1 - BREAK_PAST, y],
+			[middle - 6, y],
+			[middle - 2.5, y - 6],
+			[middle + 2.5, y + 6],
+			[middle + 6, y],
+			[tyre.x2 + BREAK_PAST, y]
+		]);
+	const [top, foot] = [cutTop ? box.y + BREAK_INSET : box.y, cutFoot ? box.y + box.h - BREAK_INSET : box.y + box.h];
+	return { path: (cutTop ? line(top) : '') + (cutFoot ? line(foot) : ''), top, foot };
 }

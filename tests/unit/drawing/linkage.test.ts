@@ -1,6 +1,7 @@
 import { axisAtHeight, BARS, coilOver, markUnder, placeBars, placeMarks, type PlacedMark } from '$lib/drawing/linkage';
 import { freePlace, placePlate, plateSize } from '$lib/drawing/plate';
 import { viewFrame } from '$lib/drawing/projection';
+import { tyreBreaks } from '$lib/drawing/scene';
 import { layTrammel, readTrammel } from '$lib/drawing/trammel';
 import type { Vec3 } from '$lib/kinematics';
 import fc from 'fast-check';
@@ -155,5 +156,22 @@ describe('plates', () => {
 		for (const one of [mark, blocked]) {
 			expect(one.x > free.x && one.x < free.x + size.w && one.y > free.y && one.y < free.y + size.h).toBe(false);
 		}
+	});
+});
+
+describe('a tyre that its window cuts off', () => {
+	const tyre = { edge: '', circles: '', x1: 100, x2: 200, y1: -20, y2: 380 };
+
+	it('is broken where it runs out, with the drawing kept between the breaks', () => {
+		const both = tyreBreaks(tyre, { x: 0, y: 0, w: 400, h: 360 });
+		expect(both?.path.match(/M/g)).toHaveLength(2);
+		expect([both?.top, both?.foot]).toEqual([7, 353]);
+		const foot = tyreBreaks({ ...tyre, y1: 10 }, { x: 0, y: 0, w: 400, h: 360 });
+		expect(foot?.path.match(/M/g)).toHaveLength(1);
+		expect([foot?.top, foot?.foot]).toEqual([0, 353]);
+	});
+
+	it('is whole where the window holds it', () => {
+		expect(tyreBreaks({ ...tyre, y1: 10, y2: 350 }, { x: 0, y: 0, w: 400, h: 360 })).toBeNull();
 	});
 });
