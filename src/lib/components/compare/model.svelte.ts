@@ -161,7 +161,9 @@ export class CompareModel {
 				outboard: Math.max(all.outboard, one.outboard),
 				top: Math.max(all.top, one.top),
 				fore: Math.max(all.fore, one.fore),
-				aft: Math.max(all.aft, one.aft)
+				aft: Math.max(all.aft, one.aft),
+				pointsFore: Math.max(all.pointsFore, one.pointsFore),
+				pointsAft: Math.max(all.pointsAft, one.pointsAft)
 			}),
 			first
 		);

@@ -23,8 +23,6 @@ export interface ViewsPlan {
 
 /** From this width the three views lie aligned by projection; under it one under the other. */
 const ALIGNED = 640;
-/** From this width names and title block stand beside them. */
-const BESIDE = 1000;
 const MARGIN = 16;
 const PAD = 28;
 const CAPTION = 34;
@@ -44,7 +42,8 @@ interface Sizes {
 const sizes = (e: Extents, s: number, drop: number, rise: number): Sizes => ({
 	front: e.outboard * s + 2 * PAD,
 	side: (e.fore + e.aft) * s + 2 * PAD,
-	top: (e.fore + e.aft) * s + CAPTION + PAD,
+	// The points decide what the top view shows; of the tyre, what is left of the window.
+	top: (e.pointsFore + e.pointsAft) * s + CAPTION + 2 * PAD,
 	tall: (Math.max(e.top, rise) + drop) * s + CAPTION + UNDER
 });
 
@@ -60,14 +59,12 @@ export function planViews(spec: {
 	rise: number;
 }): ViewsPlan {
 	const { width, extents, drop, rise } = spec;
-	const beside = width >= BESIDE;
-	const room = beside ? width - TITLE_WIDTH - 2 * MARGIN : width;
 	const scale = chooseScale((s) => {
 		const { front, side, top, tall } = sizes(extents, s, drop, rise);
 		if (width < ALIGNED) return Math.max(front, side) <= width;
-		return front + side <= room && top + tall <= 900;
+		return front + side <= width && top + tall <= 900;
 	});
-	return width < ALIGNED ? stacked(spec, scale) : aligned(spec, scale, beside);
+	return width < ALIGNED ? stacked(spec, scale) : aligned(spec, scale);
 }
 
 type Spec = Parameters<typeof planViews>[0];
@@ -83,10 +80,10 @@ function sideOrigin(box: Box, e: Extents, frame: Frame, s: number): number {
 	return box.x + box.w / 2 - ((e.fore - e.aft) / 2) * frame.right[0] * s;
 }
 
-function aligned({ width, hand, extents: e, drop, rise }: Spec, scale: Scale, beside: boolean): ViewsPlan {
+function aligned({ width, hand, extents: e, drop, rise }: Spec, scale: Scale): ViewsPlan {
 	const s = pxPerMm(scale);
 	const { front, side, top, tall } = sizes(e, s, drop, rise);
-	const start = beside ? MARGIN : Math.max(0, (width - front - side) / 2);
+	const start = Math.max(0, (width - front - side) / 2);
 	// The side view lies on the centreline's hand of the front view: at left for a left corner.
 	const [sideX, frontX] = hand === 'left' ? [start, start + side] : [start + front, start];
 	const frontBox = { x: frontX, y: top, w: front, h: tall };
@@ -103,20 +100,9 @@ function aligned({ width, hand, extents: e, drop, rise }: Spec, scale: Scale, be
 			at: { x: sideOrigin(sideBox, e, of.side, s), y: groundY, pxPerMm: s },
 			frame: of.side
 		},
-		{ view: 'top', box: topBox, at: { x: centreX, y: CAPTION + e.aft * s, pxPerMm: s }, frame: of.top }
+		{ view: 'top', box: topBox, at: { x: centreX, y: CAPTION + PAD / 2 + e.pointsAft * s, pxPerMm: s }, frame: of.top }
 	];
 	const bottom = top + tall;
-	if (beside) {
-		const title = { x: width - MARGIN - TITLE_WIDTH, y: bottom - TITLE, w: TITLE_WIDTH, h: TITLE };
-		return {
-			width,
-			height: bottom + MARGIN,
-			scale,
-			views,
-			notes: { x: title.x, y: MARGIN + 8, w: TITLE_WIDTH, h: NOTES },
-			title
-		};
-	}
 	const title = { x: width - MARGIN - TITLE_WIDTH, y: bottom + MARGIN, w: TITLE_WIDTH, h: TITLE };
 	// The quadrant over the side view is free.
 	return {
@@ -145,7 +131,12 @@ function stacked({ width, hand, extents: e, drop, rise }: Spec, scale: Scale): V
 		height: end + NOTES + MARGIN + FLAT_TITLE,
 		scale,
 		views: [
-			{ view: 'top', box: topBox, at: { x: centreX, y: CAPTION + e.aft * s, pxPerMm: s }, frame: of.top },
+			{
+				view: 'top',
+				box: topBox,
+				at: { x: centreX, y: CAPTION + PAD / 2 + e.pointsAft * s, pxPerMm: s },
+				frame: of.top
+			},
 			{ view: 'front', box: frontBox, at: { x: centreX, y: ground(frontBox), pxPerMm: s }, frame: of.front },
 			{
 				view: 'side',
