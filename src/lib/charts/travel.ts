@@ -28,6 +28,17 @@ function inchText(shown: number, preferences: Preferences): string {
 	return shown > 0 ? `+${text}` : text;
 }
 
+/** One writer for one choice of units: charts that compare their travel by identity see no change where there is none. */
+const WRITERS = new WeakMap<Preferences, TravelSpec['format']>();
+
+function writer(preferences: Preferences): TravelSpec['format'] {
+	const write =
+		WRITERS.get(preferences) ??
+		((shown: number) => (preferences.length === 'mm' ? travelText(shown, preferences) : inchText(shown, preferences)));
+	WRITERS.set(preferences, write);
+	return write;
+}
+
 /** Where a sweep binds, as the chart shows it; null where it does not. */
 export function limitOf(limit: SweepLimit | undefined, preferences: Preferences): Limit | null {
 	if (!limit) return null;
@@ -50,7 +61,7 @@ export function travelSpec(
 		at: at * perUnit,
 		low: limitOf(sweep?.lowLimit, preferences),
 		high: limitOf(sweep?.highLimit, preferences),
-		format: (shown) => (preferences.length === 'mm' ? travelText(shown, preferences) : inchText(shown, preferences)),
+		format: writer(preferences),
 		unit: unitLabel('length', preferences),
 		step: stepMm(false, preferences) * perUnit,
 		fine: stepMm(true, preferences) * perUnit

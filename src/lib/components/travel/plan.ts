@@ -34,6 +34,8 @@ export interface PlanSpec {
 	charts: number;
 	hand: Hand;
 	room: Room;
+	/** Whether the figures at the slide stand in a list of their own; without it the view has their room. */
+	listed?: boolean;
 }
 
 /** From this width the view stands beside the charts. */
@@ -87,10 +89,10 @@ export function planSheet(spec: PlanSpec): SheetPlan {
 	return spec.width >= WIDE ? planWide(spec) : planTall(spec);
 }
 
-function planWide({ width, height, charts, hand, room }: PlanSpec): SheetPlan {
+function planWide({ width, height, charts, hand, room, listed = true }: PlanSpec): SheetPlan {
 	const across = Math.min(3, Math.max(1, charts));
 	const rows = Math.ceil(charts / across);
-	const figuresH = charts * FIGURE_PITCH + 34;
+	const figuresH = listed ? charts * FIGURE_PITCH + 34 : 0;
 	const under = TITLE + 2 * MARGIN;
 	const least = Math.max(MARGIN + rows * (ROW_HEAD + LEAST_PLOT + ROW_FOOT) + under, 320 + figuresH + MARGIN);
 	const whole = Math.max(height, least);
@@ -108,7 +110,7 @@ function planWide({ width, height, charts, hand, room }: PlanSpec): SheetPlan {
 		view,
 		scale,
 		at: placed(view, room, scale, hand),
-		figures: { x: MARGIN, y: viewH, w: column - MARGIN, h: figuresH },
+		figures: listed ? { x: MARGIN, y: viewH, w: column - MARGIN, h: figuresH } : null,
 		charts: { x: column, y: MARGIN / 2, w: beside, across, plot },
 		notes: { x: column + MARGIN, y: title.y, w: title.x - column - 2 * MARGIN, h: TITLE },
 		title
@@ -119,8 +121,8 @@ const NARROW_VIEW = 400;
 const NARROW_PLOT = 200;
 const LIST = 300;
 
-function planTall({ width, charts, hand, room }: PlanSpec): SheetPlan {
-	const listed = width >= 640;
+function planTall({ width, charts, hand, room, ...spec }: PlanSpec): SheetPlan {
+	const listed = width >= 640 && spec.listed !== false;
 	const figuresH = charts * FIGURE_PITCH + 34;
 	const viewW = listed ? width - LIST - MARGIN : width;
 	const scale = viewScale(room, viewW, NARROW_VIEW);
