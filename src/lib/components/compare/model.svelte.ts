@@ -140,6 +140,16 @@ export class CompareModel {
 	readonly #still: readonly DrawnCorner[] = $derived.by(() =>
 		this.corners.map((one) => (one.solved ? this.#asDrawn(one, one.solved.ride) : this.#entered(one)))
 	);
+	/** The same as `shown`, at ride height whatever the slide says. */
+	readonly shownAtRide: CompareModel['shown'] = $derived.by(() =>
+		this.corners
+			.map(({ key, seriesIndex }, k) => {
+				const corner = this.#still[k];
+				return corner && { key, seriesIndex, corner };
+			})
+			.filter((one) => one !== undefined)
+			.sort((a, b) => b.seriesIndex - a.seriesIndex)
+	);
 	/** The newest corner at ride height. */
 	readonly atRide: DrawnCorner | null = $derived.by(() => {
 		const newest = this.drawn[0] ?? this.corners[0];

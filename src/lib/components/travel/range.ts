@@ -45,8 +45,9 @@ export function rangeErrors({ from, to, step }: SweepRange, preferences: Writing
 	if (step > span) return { step: `Step: at most the whole travel, ${shown(span)} ${unit}.` };
 	const count = statesIn({ from, to, step });
 	if (count <= MOST_STATES) return {};
-	// Rounded up at the last decimal shown, so that typing what is said is accepted.
-	const decimals = preferences.length === 'in' ? 1e-3 * MM_PER_INCH : 0.1;
+	// Rounded up to what is shown, so that typing what is said is accepted.
+	const inch = preferences.inches === 'fraction' ? MM_PER_INCH / 32 : MM_PER_INCH / 1000;
+	const decimals = preferences.length === 'in' ? inch : 0.1;
 	const least = Math.ceil(span / (MOST_STATES - 1) / decimals - 1e-9) * decimals;
 	return {
 		step: `${count} positions are too many: a step of ${shown(least)} ${unit} or more keeps to ${MOST_STATES}.`
