@@ -4,7 +4,7 @@ import { engagementAfter, threadOf, turningWords } from '$lib/domain/alignment/t
 import { threadPastNut, type End, type Warning } from '$lib/domain/alignment/warnings';
 import { formatGrowth, formatThickness, formatTurns } from '$lib/components/shims/words';
 import type { EndDrawing } from '$lib/components/shims/drawings';
-import { formatNumber, formatQuantity, formatWithUnit, unitLabel, type WritingChoice } from '$lib/format';
+import { formatNumber, formatQuantity, unitLabel, type WritingChoice } from '$lib/format';
 import type { AdjusterEntry } from '$lib/schemas/axle';
 
 export const FIGURE_WORDS = { camber: 'Camber', caster: 'Caster', toe: 'Toe per wheel' } as const;
@@ -51,16 +51,25 @@ export function warningWords(warning: Warning, preferences: WritingChoice): stri
 	}
 }
 
-/** "4.0 flats longer" with the turns and the length behind it. */
-export function tieRodWords(change: TieRodChange, preferences: WritingChoice): { flats: string; detail: string } {
-	const way = change.length > 0 ? 'longer' : 'shorter';
+/** A tie rod's change as it is set: "1.8 flats", "shorter", and what that is in length and turns. */
+export function tieRodWords(
+	change: TieRodChange,
+	preferences: WritingChoice
+): { flats: string; way: string; detail: string } {
 	const flats = formatNumber(Math.abs(change.flats), 1, preferences);
-	const still = flats === formatNumber(0, 1, preferences);
+	if (flats === formatNumber(0, 1, preferences)) return { flats: 'as it is', way: '', detail: '' };
 	const growth = `${formatGrowth(change.length, preferences)} ${unitLabel('length', preferences)}`;
 	return {
-		flats: still ? 'as it is' : `${flats} flats ${way}`,
+		flats: `${flats} flats`,
+		way: change.length > 0 ? 'longer' : 'shorter',
 		detail: `${growth}, ${formatNumber(Math.abs(change.turns), 2, preferences)} turns`
 	};
+}
+
+/** Flats with their sign, + longer. */
+export function flatsText(change: TieRodChange, preferences: WritingChoice): string {
+	const text = formatNumber(change.flats, 1, preferences);
+	return change.flats > 0 && /[1-9]/.test(text) ? `+${text}` : text;
 }
 
 /** How far a figure is inside or outside its tolerance. */
@@ -72,10 +81,14 @@ export function figureVerdict({ remains, target }: FigureAnswer): 'pass' | 'near
 	return part <= 1.2 ? 'near' : 'miss';
 }
 
-/** "−0.75 ± 0.25°". */
-export function targetWords({ target }: FigureAnswer, preferences: WritingChoice): string {
-	if (!target) return 'free';
-	return `${formatQuantity(target.value, 'angle', preferences)} ± ${formatWithUnit(target.tolerance, 'angle', preferences)}`;
+/** A target as it stands in a table: "−0.75" and "0.25", or "free". */
+export function targetWords(
+	{ target }: FigureAnswer,
+	preferences: WritingChoice
+): { value: string; tolerance: string | null } {
+	if (!target) return { value: 'free', tolerance: null };
+	const angle = (degrees: number) => formatQuantity(degrees, 'angle', preferences);
+	return { value: angle(target.value), tolerance: angle(target.tolerance) };
 }
 
 /** What to set at one end, for a table: the figure that is done and the change behind it. */
