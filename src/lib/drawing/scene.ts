@@ -84,7 +84,7 @@ export function viewScene(eye: Eye, at: ViewWindow['at'], corner: DrawnCorner): 
 	return {
 		bars: placeBars(eye.frame, placement, places),
 		marks: placeMarks(eye.frame, placement, places),
-		tyre: wheel ? tyrePaths(eye, wheel, placement) : null,
+		tyre: wheel ? tyreOnce(eye, wheel, placement) : null,
 		hub: wheel && spot(wheel.centre),
 		contact: wheel && spot(wheel.contact),
 		axisFoot: foot && spot(foot),
@@ -115,7 +115,23 @@ function wheelLine(frame: Frame, spin: Vec3): number | null {
 	return Math.atan2(-dv, du);
 }
 
-function tyrePaths(eye: Eye, wheel: NonNullable<DrawnCorner['wheel']>, at: ViewWindow['at']): ViewScene['tyre'] {
+type Wheel = NonNullable<DrawnCorner['wheel']>;
+type Tyre = ViewScene['tyre'];
+
+/** A wheel that stands still in a window that stands still is laid out once: most edits leave it where it is. */
+const LAID = new WeakMap<Wheel, WeakMap<Eye, { at: ViewWindow['at']; tyre: Tyre }>>();
+
+function tyreOnce(eye: Eye, wheel: Wheel, at: ViewWindow['at']): Tyre {
+	const byEye = LAID.get(wheel) ?? new WeakMap<Eye, { at: ViewWindow['at']; tyre: Tyre }>();
+	LAID.set(wheel, byEye);
+	const laid = byEye.get(eye);
+	if (laid && laid.at.x === at.x && laid.at.y === at.y && laid.at.pxPerMm === at.pxPerMm) return laid.tyre;
+	const tyre = tyrePaths(eye, wheel, at);
+	byEye.set(eye, { at, tyre });
+	return tyre;
+}
+
+function tyrePaths(eye: Eye, wheel: Wheel, at: ViewWindow['at']): Tyre {
 	const lay = (plane: readonly Plane[]) => plane.map((one) => toSheet(at, one));
 	const outline = lay(tyreOutline(eye.frame, wheel.centre, wheel.spin, wheel.tyre));
 	const [xs, ys] = [outline.map(([x]) => x), outline.map(([, y]) => y)];

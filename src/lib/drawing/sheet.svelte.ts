@@ -8,6 +8,7 @@ import {
 	type SheetMode,
 	type SheetSpec
 } from './layout';
+import type { Box } from './layout';
 import type { MarkKey, PlacedMark } from './linkage';
 import {
 	ORBIT_HOME,
@@ -19,6 +20,7 @@ import {
 	type ProjectionAngle,
 	type ViewKey
 } from './projection';
+import { reuse } from './reuse';
 import { viewScene, type DrawnCorner, type Eye, type ViewScene } from './scene';
 
 /** A zoom of one view: k times as large, moved by (x, y) px of the sheet. */
@@ -48,16 +50,20 @@ export interface SheetSource {
 	readonly holdStill: boolean;
 }
 
-/** One view ready to be drawn. */
-export interface SheetView {
+/** One view's window: where it is, how it looks, and whether it shows another part than the sheet laid out. */
+interface SheetWindow {
 	key: ViewKey;
-	box: { x: number; y: number; w: number; h: number };
+	box: Box;
 	at: Placement;
 	eye: Eye;
+	moved: boolean;
+}
+
+/** One view ready to be drawn. */
+export interface SheetView extends SheetWindow {
 	scene: ViewScene;
 	ghosts: ViewScene[];
 	dimensions: PlacedDimension[];
-	moved: boolean;
 }
 
 const VIEW_ORDER: readonly ViewKey[] = ['front', 'side', 'top', 'orbit'];
@@ -70,20 +76,20 @@ export class SheetModel {
 	zooms = $state.raw<Record<ViewKey, Zoom>>({ front: NO_ZOOM, top: NO_ZOOM, side: NO_ZOOM, orbit: NO_ZOOM });
 	readonly #source: SheetSource;
 	#held: Extents | null = null;
+	/** What was drawn last: parts that did not change keep their identity, so that nothing is drawn twice. */
+	#drawn: SheetView[] | undefined;
 
 	constructor(source: SheetSource) {
 		this.#source = source;
 	}
 
 	readonly extents: Extents = $derived.by(() => {
-		const { atRide, hand, holdStill } = this.#source;
-		if (holdStill && this.#held) return this.#held;
+		// Asked first: while the sheet is held still a moving corner is not even looked at.
+		if (this.#source.holdStill && this.#held) return this.#held;
+		const { atRide, hand } = this.#source;
 		const wheel = atRide.wheel ?? { ...FALLBACK_WHEEL, centre: [0, hand === 'left' ? 700 : -700, 300] as const };
-		const found = extentsOf(atRide.places, wheel);
-		// The same room as before is the same object: nothing that hangs on it is worked out again.
-		if (this.#held && JSON.stringify(this.#held) === JSON.stringify(found)) return this.#held;
-		this.#held = found;
-		return found;
+		this.#held = reuse(this.#held ?? undefined, extentsOf(atRide.places, wheel));
+		return this.#held;
 	});
 
 	readonly layout: SheetLayout = $derived.by(() => {
@@ -91,32 +97,40 @@ export class SheetModel {
 		return layoutSheet({ width, height, mode, hand, cell, angle: this.angle, extents: this.extents });
 	});
 
-	readonly views: SheetView[] = $derived.by(() => {
-		const { corner, ghosts, dimensions, hand } = this.#source;
-		const outward = hand === 'left' ? 1 : -1;
-		const views: SheetView[] = [];
-		for (const key of VIEW_ORDER) {
+	/** The views' windows after zoom and turn, without what is drawn in them. */
+	readonly #windows: SheetWindow[] = $derived.by(() => {
+		const { hand } = this.#source;
+		return VIEW_ORDER.flatMap((key) => {
 			const window = this.layout.views[key];
-			if (!window) continue;
+			if (!window) return [];
 			const zoom = this.zooms[key];
-			const at = zoomed(window.at, zoom);
-			const eye: Eye =
-				key === 'orbit'
-					? { key, frame: orbitFrame(this.orbit), about: orbitCentre(this.extents, hand) }
-					: { key, frame: window.frame };
-			const scene = viewScene(eye, at, corner);
-			views.push({
-				key,
-				box: window.box,
-				at,
-				eye,
+			const turned = key === 'orbit';
+			const frame = turned ? orbitFrame(this.orbit) : window.frame;
+			const eye: Eye = turned ? { key, frame, about: orbitCentre(this.extents, hand) } : { key, frame };
+			return [{ key, box: window.box, at: zoomed(window.at, zoom), eye, moved: zoom !== NO_ZOOM }];
+		});
+	});
+
+	/** Corners under the one in hand, per window: a drag leaves them as they are. */
+	readonly #ghosts: ViewScene[][] = $derived.by(() => {
+		const { ghosts } = this.#source;
+		return this.#windows.map(({ eye, at }) => ghosts.map((ghost) => viewScene(eye, at, ghost)));
+	});
+
+	readonly views: SheetView[] = $derived.by(() => {
+		const { corner, dimensions, hand } = this.#source;
+		const outward = hand === 'left' ? 1 : -1;
+		const views = this.#windows.map((window, k) => {
+			const scene = viewScene(window.eye, window.at, corner);
+			return {
+				...window,
 				scene,
-				ghosts: ghosts.map((ghost) => viewScene(eye, at, ghost)),
-				dimensions: viewDimensions(key, scene, window.box, dimensions, outward),
-				moved: zoom !== NO_ZOOM
-			});
-		}
-		return views;
+				ghosts: this.#ghosts[k] ?? [],
+				dimensions: viewDimensions(window.key, scene, window.box, dimensions, outward)
+			};
+		});
+		this.#drawn = reuse(this.#drawn, views);
+		return this.#drawn;
 	});
 
 	view(key: ViewKey): SheetView | null {

@@ -52,7 +52,8 @@ function allowed(event: MouseEvent | WheelEvent | TouchEvent, node: SVGGElement,
 	}
 	if ('touches' in event) return event.touches.length > 1 || !spec.scrolls();
 	const { button, clientX, clientY } = event as MouseEvent;
-	if (button !== 0) return false;
+	// A figure that is pressed to be typed is no place to pan from.
+	if (button !== 0 || (event.target as Element).closest('.editable')) return false;
 	const matrix = node.ownerSVGElement?.getScreenCTM()?.inverse();
 	const at = matrix ? new DOMPoint(clientX, clientY).matrixTransform(matrix) : SHEET;
 	hold(node, spec.zoom());

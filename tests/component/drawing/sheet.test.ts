@@ -31,6 +31,7 @@ beforeAll(() => {
 		}
 	);
 	vi.spyOn(HTMLElement.prototype, 'clientWidth', 'get').mockReturnValue(1224);
+	Object.defineProperty(Element.prototype, 'hasPointerCapture', { configurable: true, value: () => false });
 	Object.defineProperty(SVGElement.prototype, 'getScreenCTM', { configurable: true, value: () => null });
 	vi.spyOn(HTMLElement.prototype, 'clientHeight', 'get').mockReturnValue(852);
 });
@@ -78,7 +79,7 @@ function open({ document = exampleAxle(), previous, readOnly, preferences = {}, 
 	};
 	render(Frame, {
 		props: {
-			part: PointsWork as unknown as Component<typeof given>,
+			part: PointsWork as unknown as Component<Record<string, unknown>>,
 			given,
 			preferences: { ...DEFAULT_PREFERENCES, ...preferences }
 		}

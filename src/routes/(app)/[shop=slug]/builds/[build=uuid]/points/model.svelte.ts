@@ -1,35 +1,29 @@
-import { AXIS_ROOM, layCharts, type ChartSpec } from '$lib/charts/multiples';
-import { linear } from '$lib/charts/scale';
+import { curveSpec, shownValue, type Curved } from '$lib/charts/curves';
+import { layCharts, type ChartLayout, type ChartSpec, type TravelSpec } from '$lib/charts/multiples';
+import type { Domain } from '$lib/charts/scale';
+import { travelSpec } from '$lib/charts/travel';
 import { axleGeometry, rightCorner } from '$lib/domain/axle';
-import { OUTPUTS } from '$lib/domain/outputs';
-import { POINTS } from '$lib/domain/points';
+import { entryOf, POINT_ORDER, POINTS } from '$lib/domain/points';
+import { drawnEntry, drawnState, tyreOf, type DrawnTyre } from '$lib/drawing/corner';
 import type { DimensionKey, DimensionText } from '$lib/drawing/figures';
 import type { SheetMode, SheetSpec, SideCell } from '$lib/drawing/layout';
 import type { MarkKey, MarkKind } from '$lib/drawing/linkage';
 import type { Hand } from '$lib/drawing/projection';
+import { reuse } from '$lib/drawing/reuse';
 import type { DrawnCorner } from '$lib/drawing/scene';
 import { SheetModel } from '$lib/drawing/sheet.svelte';
 import { readTrammel } from '$lib/drawing/trammel';
-import {
-	KinematicsError,
-	solveCorner,
-	sweepBump,
-	type CornerGeometry,
-	type CornerState,
-	type Vec3
-} from '$lib/kinematics';
-import { entryOf } from '$lib/domain/points';
+import { KinematicsError, solveCorner, sweepBump, type CornerGeometry, type CornerState, type Vec3 } from '$lib/kinematics';
 import type { AxleDocument, CornerEntry, FigureKey } from '$lib/schemas/axle';
 import type { BuildFacts } from '$lib/schemas/build';
 import type { Preferences } from '$lib/schemas/preferences';
 import type { DraftEditor } from '$lib/state/draft.svelte';
 import type { Selection } from '$lib/state/selection.svelte';
 import type { Solution } from '$lib/state/solution.svelte';
-import { drawnEntry, drawnState, tyreOf } from '$lib/drawing/corner';
-import { curveSpec, type Curved } from '$lib/charts/curves';
-import { travelSpec } from '$lib/charts/travel';
-import { CURVES, quantityText } from './curves';
-import { figureRows, spokenFigure, type FigureRow } from './figures';
+import { CURVES, plotCurves, type Plot } from './curves';
+import { dimensionTexts } from './dimensionTexts';
+import { figureRows, type FigureRow } from './figures';
+import { placeWords } from './words';
 
 /** An earlier revision that lies under the drawing. */
 export interface Previous {
@@ -84,11 +78,8 @@ function tryState(geometry: CornerGeometry, travel: number): CornerState | null 
 	}
 }
 
-const CHARTS_HEAD = 58;
-const CHARTS_FOOT = 26;
 /** Over the curves stands the switch of what is shown there. */
 const SWITCH_ROOM = 20;
-const LEADER_ROOM = 10;
 
 /** Everything the Points page shows, from the editor, the solution and the selection. */
 export class PointsModel {
@@ -150,10 +141,12 @@ export class PointsModel {
 
 	readonly #entered = $derived.by(() => cornerOf(this.#source.editor.document, this.#source.selection.side));
 	readonly hand: Hand = $derived(this.#entered.hand);
-	readonly tyre = $derived.by(() => tyreOf(this.#entered.corner.wheel.loadedRadius, this.#source.build.tyreSize));
+	readonly #radius: number | null = $derived(this.#entered.corner.wheel.loadedRadius);
+	readonly tyre: DrawnTyre = $derived.by(() => tyreOf(this.#radius, this.#source.build.tyreSize));
 	readonly #typed: DrawnCorner = $derived(drawnEntry(this.#entered.corner, this.hand, this.tyre));
 	/** True while not one point is typed: the sheet shows its example and one act. */
 	readonly empty: boolean = $derived(Object.keys(this.#typed.places).length === 0);
+	readonly #faulty: boolean = $derived.by(() => this.#source.solution.error !== null);
 
 	/** The solved state the drawing shows: at the travel slide, or the nearest that is reached. */
 	readonly state: CornerState | null = $derived.by(() => {
@@ -171,9 +164,12 @@ export class PointsModel {
 			: drawnEntry(example.left, 'left', this.tyre);
 	});
 
-	readonly corner: DrawnCorner = $derived(
-		this.empty ? this.#exampleCorner : this.state ? drawnState(this.state, this.tyre) : this.#typed
-	);
+	#lastCorner: DrawnCorner | undefined;
+	readonly corner: DrawnCorner = $derived.by(() => {
+		const drawn = this.empty ? this.#exampleCorner : this.state ? drawnState(this.state, this.tyre) : this.#typed;
+		this.#lastCorner = reuse(this.#lastCorner, drawn);
+		return this.#lastCorner;
+	});
 
 	/** What the sheet's room is worked out from. */
 	readonly atRide: DrawnCorner = $derived.by(() => {
@@ -200,120 +196,100 @@ export class PointsModel {
 	readonly ghosts: DrawnCorner[] = $derived.by(() => {
 		const { solution } = this.#source;
 		if (this.empty) return [];
-		if (solution.error) return solution.lastGood ? [drawnState(solution.lastGood.ride, this.tyre)] : [];
+		if (this.#faulty) return solution.lastGood ? [drawnState(solution.lastGood.ride, this.tyre)] : [];
 		if (!this.ghosted || !this.#previous) return [];
 		const state = tryState(this.#previous.geometry, solution.travel);
 		return state ? [drawnState(state, this.tyre)] : [];
 	});
 
+	#lastRows: FigureRow[] | undefined;
 	readonly rows: FigureRow[] = $derived.by(() => {
 		const { solution, preferences } = this.#source;
 		const solved = solution.lastGood;
 		if (!solved || this.empty) return [];
-		return figureRows(solved, solution.error ? solved.ride : (this.state ?? solved.ride), preferences);
+		const now = this.#faulty ? solved.ride : (this.state ?? solved.ride);
+		this.#lastRows = reuse(this.#lastRows, figureRows(solved, now, preferences));
+		return this.#lastRows;
 	});
-
-	row(key: FigureKey): FigureRow | null {
-		return this.rows.find((row) => row.key === key) ?? null;
-	}
 
 	/** Bars, arms and marks at fault. */
 	readonly miss: readonly string[] = $derived.by(() => {
+		if (!this.#faulty) return [];
 		const { error } = this.#source.solution;
 		return [error?.at, error?.locks].filter((name) => name !== undefined);
 	});
 
 	readonly dimensions: Partial<Record<DimensionKey, DimensionText>> = $derived.by(() => {
-		const { state } = this;
-		if (!state || this.empty) return {};
+		const { state, rows, empty } = this;
 		const { editor, preferences, solution } = this.#source;
-		const atRide = solution.travel === 0;
 		const { wheel } = this.#entered.corner;
-		const figure = (key: FigureKey, typed: boolean, label = OUTPUTS[key].short): DimensionText | undefined => {
-			const value = OUTPUTS[key].read(state, solution.ride ?? state);
-			if (value === null) return undefined;
-			const row = this.row(key);
-			const angle = OUTPUTS[key].quantity === 'angle' && preferences.angle === 'decimal' ? '°' : '';
-			return {
-				text: `${label} ${quantityText(value, key, preferences)}${angle}`,
-				name: row && atRide ? spokenFigure(row) : `${OUTPUTS[key].label} ${quantityText(value, key, preferences)}`,
-				verdict: atRide ? (row?.verdict ?? null) : null,
-				editable: typed && atRide && !editor.readOnly
-			};
-		};
-		const length = (value: number | null, name: string, label: string): DimensionText | undefined => {
-			if (value === null) return undefined;
-			const text = quantityText(value, 'scrubRadius', preferences);
-			return { text: `${label}${text}`, name: `${name} ${text}`, verdict: null, editable: !editor.readOnly };
-		};
-		const toe = figure('toe', true);
-		return {
-			camber: figure('camber', true),
-			kpi: figure('kpi', false),
-			scrubRadius: figure('scrubRadius', false),
-			rollCentreHeight: figure('rollCentreHeight', false, 'RC'),
-			track: length(wheel.track, 'track', 'track '),
-			loadedRadius: length(wheel.loadedRadius, 'loaded radius', ''),
-			caster: figure('caster', false),
-			mechanicalTrail: figure('mechanicalTrail', false),
-			toe: toe && { ...toe, note: 'per wheel' }
-		};
+		if (!state || empty || !solution.ride) return {};
+		return dimensionTexts({ state, ride: solution.ride, wheel, rows, preferences, readOnly: editor.readOnly });
 	});
 
-	readonly travel = $derived.by(() => {
-		const { solution, preferences } = this.#source;
-		return travelSpec(this.state?.travel ?? 0, solution.range, solution.sweep, preferences);
+	/** Marks say name and coordinates, so that a view can be read without seeing it. */
+	#lastNames: Record<MarkKey, string> | undefined;
+	readonly names: Record<MarkKey, string> = $derived.by(() => {
+		const { preferences, build } = this.#source;
+		const names = { ...MARK_NAMES };
+		for (const key of POINT_ORDER) {
+			const place = this.entry(key);
+			if (!place) continue;
+			const said = placeWords(place, build.datum, this.hand, preferences);
+			names[key] = `${MARK_NAMES[key]}, ${said.out}, ${said.up}, ${said.fore}`;
+		}
+		this.#lastNames = reuse(this.#lastNames, names);
+		return this.#lastNames;
 	});
+
+	#lastTravel: TravelSpec | undefined;
+	readonly travel: TravelSpec = $derived.by(() => {
+		const { solution, preferences } = this.#source;
+		const spec = travelSpec(this.state?.travel ?? 0, solution.range, solution.sweep, preferences);
+		this.#lastTravel = reuse(this.#lastTravel, spec);
+		return this.#lastTravel;
+	});
+	readonly #domain: Domain = $derived(this.travel.domain);
 
 	readonly #curved: Curved[] = $derived.by(() => {
 		const { solution } = this.#source;
 		const curved: Curved[] = [];
-		if (this.state && solution.ride && solution.sweep) {
-			curved.push({ label: this.name, ride: solution.ride, sweep: solution.sweep });
-		}
+		if (solution.ride && solution.sweep) curved.push({ label: this.name, ride: solution.ride, sweep: solution.sweep });
 		if (this.ghosted && this.#previous && curved.length) {
 			curved.push({ label: this.#previous.letter, ride: this.#previous.ride, sweep: this.#previous.sweep });
 		}
 		return curved;
 	});
 
-	/** The curves beside the front view, laid out, or null where the sheet has no room for them now. */
-	readonly charts = $derived.by(() => {
-		const { charts: box, wheelY } = this.sheet.layout;
-		if (!box) return null;
-		const { editor, preferences } = this.#source;
-		const left = box.x + LEADER_ROOM + AXIS_ROOM + 12;
-		const width = box.x + box.w - left - 4;
-		const count = width >= 340 ? 4 : width >= 204 ? 3 : 2;
-		const top = box.y + (this.#source.mode === 'narrow' ? SWITCH_ROOM : 0) + CHARTS_HEAD;
-		const bottom = box.y + box.h - CHARTS_FOOT;
-		const { domain } = this.travel;
-		// Ride height stands at the wheel centre's own height on the sheet; the travel's scale is as large as that allows.
-		const perUnit = Math.min((wheelY - top) / domain[1], (bottom - wheelY) / -domain[0]);
-		const y = linear(domain, [wheelY - domain[0] * perUnit, wheelY - domain[1] * perUnit]);
-		const { state } = this;
-		const curved = this.#curved;
-		const specs = state
-			? CURVES.slice(0, count).map((key) => curveSpec(key, curved, state, editor.document.targets, preferences))
-			: [];
-		return {
-			box,
-			y,
-			specs,
-			layouts: layCharts(specs, left, width),
-			axisX: box.x + LEADER_ROOM + AXIS_ROOM,
-			right: box.x + box.w - 4,
-			plateX: box.x + LEADER_ROOM - 2
-		};
+	/** Where the curves stand beside the front view, or null where the sheet has no room for them now. */
+	readonly plot: Plot | null = $derived.by(() => {
+		const { charts, wheelY } = this.sheet.layout;
+		const headroom = this.#source.mode === 'narrow' ? SWITCH_ROOM : 0;
+		return charts && plotCurves(charts, wheelY, this.#domain, headroom);
 	});
+
+	/** The curves; the slide moves over them and leaves them as they are. */
+	readonly curves: ChartSpec[] = $derived(
+		this.plot && this.#curved.length ? CURVES.slice(0, this.plot.count).map((key) => this.#curve(key)) : []
+	);
+	readonly curveLayouts: ChartLayout[] = $derived(
+		this.plot ? layCharts(this.curves, this.plot.left, this.plot.width) : []
+	);
+
+	/** What stands at the cursor of a curve. */
+	cursor(key: string): number | null {
+		const { solution, preferences } = this.#source;
+		return shownValue(key as FigureKey, this.state, solution.ride, preferences);
+	}
+
+	#curve(key: FigureKey): ChartSpec {
+		const { editor, preferences } = this.#source;
+		return curveSpec(key, this.#curved, null, editor.document.targets, preferences);
+	}
 
 	/** One figure's chart on its own, for a phone. */
 	chart(key: FigureKey): ChartSpec | null {
-		const { state } = this;
-		const { editor, preferences } = this.#source;
-		return state && this.#curved.length
-			? curveSpec(key, this.#curved, state, editor.document.targets, preferences)
-			: null;
+		return this.#curved.length ? { ...this.#curve(key), cursorValue: this.cursor(key) } : null;
 	}
 
 	/** What stands at the end of the curve in hand. */
