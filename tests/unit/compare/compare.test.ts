@@ -182,8 +182,8 @@ describe('figures side by side', () => {
 		]);
 		// −1.25 lies 0.25 outside a band 1 wide: more than the fifth that counts as near.
 		expect(rows[0]?.cells.map(({ text, verdict, own }) => [text, verdict, own])).toEqual([
-			['−0.50°', 'pass', true],
-			['−1.25°', 'miss', true]
+			['−0.50', 'pass', true],
+			['−1.25', 'miss', true]
 		]);
 		expect(rows[1]?.cells.map(({ own }) => own)).toEqual([false, true]);
 	});

@@ -1,7 +1,7 @@
 import type { Evaluation } from '$lib/domain/evaluation';
 import { OUTPUT_LIST, reasonOf } from '$lib/domain/outputs';
 import { judge, targetInWords, type Verdict } from '$lib/domain/targets';
-import { decimalsOf, formatDelta, formatQuantity, formatWithUnit, NONE, unitLabel } from '$lib/format';
+import { decimalsOf, formatDelta, formatQuantity, NONE, unitLabel } from '$lib/format';
 import type { CornerState } from '$lib/kinematics';
 import type { AxleDocument, FigureKey, Target } from '$lib/schemas/axle';
 import type { Preferences } from '$lib/schemas/preferences';
@@ -63,6 +63,7 @@ export function figureRows(states: readonly ComparedState[], atRide: boolean, pr
 }
 
 export interface TargetCell {
+	/** Without its unit, which stands in the target's words. */
 	text: string;
 	verdict: Verdict;
 	word: string;
@@ -94,7 +95,7 @@ export function targetRows(entries: readonly Judgeable[], preferences: Preferenc
 		cells: entries.map(({ evaluation, why }, place): TargetCell => {
 			const judged = evaluation && judge(target, evaluation);
 			return {
-				text: judged ? formatWithUnit(judged.value, quantityOf(target.figure), preferences) : NONE,
+				text: judged ? formatQuantity(judged.value, quantityOf(target.figure), preferences) : NONE,
 				verdict: judged?.verdict ?? 'unknown',
 				word: judged?.word ?? 'not known',
 				reason: judged ? judged.reason : why,

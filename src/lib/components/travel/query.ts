@@ -40,7 +40,8 @@ function readSpan(search: URLSearchParams, preferences: Preferences): Pick<Trave
 	};
 	const range = { from: number('from'), to: number('to'), step: number('step') };
 	const errors = rangeErrors(range, preferences);
-	return Object.keys(errors).length > 0 ? { range: usual, errors } : { range, errors };
+	const told = Object.entries(errors).map(([field, message]) => [field, `The address is not followed. ${message}`]);
+	return told.length > 0 ? { range: usual, errors: Object.fromEntries(told) as RangeErrors } : { range, errors };
 }
 
 /** Reads an address; what it does not say is as usual, what cannot be is told in `errors` or left out. */
