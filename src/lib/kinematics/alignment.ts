@@ -76,19 +76,23 @@ function checkAdjusters(adjusters: Adjusters): void {
 	}
 }
 
-function checkFinite(values: Record<string, number | null | undefined>, unit: string): void {
-	for (const [name, value] of Object.entries(values)) {
-		if (value !== null && value !== undefined && !Number.isFinite(value)) {
-			throw new KinematicsError('not-finite', name, `\`${name}\` is not a number: give it in ${unit}.`);
-		}
+function checkStance({ travel = 0, rake = 0 }: Stance): void {
+	if (!Number.isFinite(travel)) {
+		throw new KinematicsError('not-finite', 'travel', 'The standing height is not a number: give it in mm of travel.');
+	}
+	if (!Number.isFinite(rake)) {
+		throw new KinematicsError(
+			'not-finite',
+			'rake',
+			'The rake is not a number: give it in degrees, nose down positive.'
+		);
 	}
 }
 
 /** The entered corner standing on its ground, rack 0. @throws KinematicsError */
 export function standing(geometry: CornerGeometry, adjusters: Adjusters, stance: Stance): Bench {
 	checkAdjusters(adjusters);
-	checkFinite({ travel: stance.travel }, 'mm');
-	checkFinite({ rake: stance.rake }, 'degrees');
+	checkStance(stance);
 	const entered = prepare(geometry);
 	const travel = stance.travel ?? 0;
 	const row = new Float64Array(at.STATE_LENGTH);
@@ -131,6 +135,11 @@ export function applyAlignment(
 	moves: AlignmentMoves,
 	stance: Stance = {}
 ): CornerState {
-	checkFinite({ ...moves }, 'mm');
+	const { front, rear, tieRod } = moves;
+	for (const [name, value] of Object.entries({ front, rear, tieRod })) {
+		if (!Number.isFinite(value)) {
+			throw new KinematicsError('not-finite', name, `The movement \`${name}\` is not a number: give it in mm.`);
+		}
+	}
 	return adjusted(standing(geometry, adjusters, stance), moves);
 }

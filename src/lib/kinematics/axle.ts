@@ -28,6 +28,8 @@ function prepareSide(geometry: CornerGeometry, side: Side): Prepared {
 
 /** Both corners, prepared: one geometry is mirrored; of two, the right one may be given with y negative or +y outboard. */
 export function prepareAxle(axle: AxleGeometry): PreparedAxle {
+	if (typeof axle !== 'object' || axle === null)
+		throw new KinematicsError('not-finite', 'axle', 'The axle is missing: give one corner, or a left and a right one.');
 	if (!('left' in axle)) return { left: prepare(axle, 'left'), right: prepare(axle, 'right') };
 	const left = prepareSide(axle.left, 'left');
 	const right = prepareSide(axle.right, 'right');
@@ -49,8 +51,8 @@ export interface TravelEnd {
 }
 
 /** Both ends of a corner's wheel-centre travel at rack 0. */
-export function wholeTravel(pair: PreparedAxle, side: Side): { low: TravelEnd; high: TravelEnd } {
-	const { low, high } = reachableTravel(pair[side], -Infinity, Infinity, 0);
+export function wholeTravel(p: Prepared): { low: TravelEnd; high: TravelEnd } {
+	const { low, high } = reachableTravel(p, -Infinity, Infinity, 0);
 	// Travel is bounded by the links, so both ends exist.
 	return { low: low as TravelEnd, high: high as TravelEnd };
 }

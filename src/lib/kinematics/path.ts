@@ -26,11 +26,18 @@ export function marginHere(p: Prepared): number {
 }
 
 /** The link to name where the wheel centre's height is at its extreme: the arm nearer to lying in line with the upright. */
-export function linkAtExtreme(p: Prepared): LinkName {
+function linkAtExtreme(p: Prepared): LinkName {
 	const m = p.motion;
 	const upper = Math.abs(m.upperRoot) / p.upper.radius;
 	const lower = Math.abs(m.upperRoot * m.upperRate) / p.lower.radius;
 	return upper < lower ? 'upperArm' : 'lowerArm';
+}
+
+/** The link nearest to its dead centre in the state in the workspace. */
+export function nearestLock(p: Prepared): LinkName {
+	const m = p.motion;
+	if (m.wvz / p.riseAtRide < Math.min(m.upperMargin, m.tieMargin)) return linkAtExtreme(p);
+	return m.upperMargin < m.tieMargin ? 'upperArm' : 'tieRod';
 }
 
 /** Halves the gap between a good and a bad angle down to neighbouring numbers and sets the end there. */
@@ -49,9 +56,11 @@ function closeEnd(p: Prepared, end: PathEnd, rack: number, goodAt: number, badAt
 	if (cause === UPPER_SHORT || cause === TIE_SHORT) {
 		// At the dead centre itself the place is smooth in θ, while just before it the square root has lost half its digits.
 		place(p, bad, rack, true);
+		end.held = bad;
 		end.locks = cause === UPPER_SHORT ? 'upperArm' : 'tieRod';
 	} else {
 		probe(p, good, rack);
+		end.held = good;
 		end.locks = linkAtExtreme(p);
 	}
 	end.travel = p.motion.wz - p.wheelHeight;

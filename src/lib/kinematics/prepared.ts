@@ -80,6 +80,8 @@ export interface PathEnd {
 	margin: number;
 	/** Set once the stretch is known to end here. */
 	locks: LinkName | null;
+	/** The angle of the end itself, to be placed with `hold`: there the dead centre is met exactly. */
+	held: number;
 }
 
 /** The stretch for one rack position, grown from a seed as it is asked for; a gap is never jumped. */
@@ -205,7 +207,7 @@ export function freshPath(rack: number, theta: number, travel: number, margin: n
 	return {
 		rack,
 		seed: theta,
-		low: { theta, travel, margin, locks: null },
-		high: { theta, travel, margin, locks: null }
+		low: { theta, travel, margin, locks: null, held: theta },
+		high: { theta, travel, margin, locks: null, held: theta }
 	};
 }

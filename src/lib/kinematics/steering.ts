@@ -55,7 +55,7 @@ function straightAhead(pair: PreparedAxle, travel: number): StraightAhead {
 	const wheelbase = pair.left.geometry.vehicle?.wheelbase ?? pair.right.geometry.vehicle?.wheelbase;
 	const a = left.steeringAxisGround;
 	const b = right.steeringAxisGround;
-	const apart = a && b ? Math.abs(a[1] - b[1]) : null;
+	const apart = a && b ? Math.hypot(a[0] - b[0], a[1] - b[1], a[2] - b[2]) : null;
 	const ratio = wheelbase && apart !== null ? apart / wheelbase : null;
 	const reason = wheelbase ? 'A steering axis does not meet the ground straight ahead.' : 'Not entered: the wheelbase.';
 	return { left: left.steerAngle, right: right.steerAngle, ratio, reason };

@@ -84,6 +84,12 @@ export function sweepBump(
 ): Sweep<CornerState> {
 	const values = stepsOf(range, 'mm');
 	const rack = range.rack ?? 0;
+	if (!Number.isFinite(rack))
+		throw new KinematicsError(
+			'not-finite',
+			'rack',
+			'The rack movement is not a number: give it in mm, positive to the left.'
+		);
 	const p = prepare(geometry);
 	const { low, high } = reachableTravel(p, Math.min(range.from, range.to), Math.max(range.from, range.to), rack);
 	const states = statesAt(p, within(values, low?.value ?? -Infinity, high?.value ?? Infinity), rack);

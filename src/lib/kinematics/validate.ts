@@ -75,6 +75,20 @@ function checkUpright(points: CornerGeometry['points']): void {
 			'The outer tie-rod joint lies on the steering axis: it must stand off the line through the two ball joints for the tie rod to steer.'
 		);
 	}
+	if (steeringArm(points) < NEAREST) {
+		throw degenerate(
+			'tieRodInner',
+			'The tie rod points at the steering axis: move the inner or the outer tie-rod joint out of the plane through the two ball joints and the other end for the rod to steer.'
+		);
+	}
+}
+
+/** Shortest distance between the steering axis and the tie rod's line, times the sine between them: the rod's arm about the axis, mm. */
+function steeringArm({ upperBall, lowerBall, tieRodInner, tieRodOuter }: CornerGeometry['points']): number {
+	const axis = vec3.normalize([0, 0, 0], vec3.subtract([0, 0, 0], upperBall, lowerBall));
+	const rod = vec3.normalize([0, 0, 0], vec3.subtract([0, 0, 0], tieRodInner, tieRodOuter));
+	const arm = vec3.subtract([0, 0, 0], tieRodOuter, lowerBall);
+	return Math.abs(vec3.dot(vec3.cross([0, 0, 0], arm, rod), axis));
 }
 
 function checkWheel(wheel: unknown): void {
@@ -148,6 +162,9 @@ function checkVehicle(vehicle: NonNullable<CornerGeometry['vehicle']>): void {
  * @throws KinematicsError `not-finite` or `degenerate`
  */
 export function checkGeometry(geometry: CornerGeometry): void {
+	if (typeof geometry !== 'object' || geometry === null) {
+		throw new KinematicsError('not-finite', 'geometry', 'The corner is missing: give its points and its wheel.');
+	}
 	const { points, wheel, coilover, vehicle } = geometry;
 	if (typeof points !== 'object' || points === null) {
 		throw new KinematicsError(
