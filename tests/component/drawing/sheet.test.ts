@@ -10,7 +10,7 @@ import { Solution } from '$lib/state/solution.svelte';
 import { render, screen, within } from '@testing-library/svelte';
 import userEvent from '@testing-library/user-event';
 import { tick, type Component } from 'svelte';
-import { beforeAll, describe, expect, test, vi } from 'vitest';
+import { beforeAll, describe, expect, onTestFinished, test, vi } from 'vitest';
 import Frame from '../../support/Frame.svelte';
 import PointsWork from '../../../src/routes/(app)/[shop=slug]/builds/[build=uuid]/points/PointsWork.svelte';
 
@@ -92,6 +92,9 @@ const upperBall = (editor: DraftEditor) => editor.document.left.points.upperBall
 
 describe('keys', () => {
 	test('arrows move the chosen point in the plane of the view: 1 mm, with Shift 0.1 mm, and undo takes the run back', async () => {
+		// The presses are one run of a held hand, however slow the machine that tests it.
+		const clock = vi.spyOn(Date, 'now').mockReturnValue(1_700_000_000_000);
+		onTestFinished(() => clock.mockRestore());
 		const { editor, view, user } = open();
 		const [x, y, z] = upperBall(editor) as [number, number, number];
 		within(view('Front view'))

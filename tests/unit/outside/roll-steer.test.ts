@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { solveCorner, sweepRoll, sweepSteer } from '../../../src/lib/kinematics';
+import { KinematicsError, solveCorner, sweepRoll, sweepSteer } from '../../../src/lib/kinematics';
 import { lowCorner, roadCorner } from '../../fixtures/corners';
 import { cornerArbitrary, real } from '../../support/corners';
 import { diskUp, dot, mirrored, rackLimit, RAD, scale, sub, type Corner, type V3 } from '../../support/newton';
@@ -24,6 +24,16 @@ function near(a: number, b: number, tolerance: number, name = ''): void {
 	if (!(Math.abs(a - b) <= tolerance)) expect.fail(`${name}: ${a} against ${b}, off ${a - b}, allowed ${tolerance}`);
 }
 
+/** Whether a corner gets to a travel at all; where it does not, an axle says so by an error, not by a shorter sweep. */
+function reaches(corner: Corner, travel: number): boolean {
+	try {
+		return solveCorner(corner, { travel, rack: 0 }) !== null;
+	} catch (error) {
+		if (error instanceof KinematicsError && error.code === 'out-of-reach') return false;
+		throw error;
+	}
+}
+
 /** Lowest point of a tyre over a ground with this normal, from the state's own wheel centre and spin axis. */
 const lowest = (state: { wheelCentre: V3; spinAxis: V3 }, radius: number, up: V3): V3 =>
 	sub(state.wheelCentre, scale(diskUp(state.spinAxis, up), radius));
@@ -34,7 +44,12 @@ describe('roll', () => {
 		let centres = 0;
 		fc.assert(
 			fc.property(axleArbitrary, real(-5, 5), real(-25, 25), ({ axle, mirror }, roll, heave) => {
-				const swept = sweepRoll(mirror ? axle.left : axle, { from: roll, to: roll, step: 1, heave });
+				const given = mirror ? axle.left : axle;
+				if (SIDES.some((side) => !reaches(axle[side], heave))) {
+					expect(() => sweepRoll(given, { from: roll, to: roll, step: 1, heave })).toThrow(KinematicsError);
+					return;
+				}
+				const swept = sweepRoll(given, { from: roll, to: roll, step: 1, heave });
 				const mine = solveRoll(axle, roll, heave);
 				const state = swept.states[0];
 				if (!state || !mine) return;
@@ -60,8 +75,8 @@ describe('roll', () => {
 			}),
 			runs(400)
 		);
-		expect(compared).toBeGreaterThan(380);
-		expect(centres).toBeGreaterThan(300);
+		expect(compared).toBeGreaterThan(300);
+		expect(centres).toBeGreaterThan(200);
 	});
 
 	it('leans the right way: a positive roll lifts the left side, so the right wheel goes into bump', () => {
@@ -130,8 +145,15 @@ describe('steer', () => {
 		let percentages = 0;
 		fc.assert(
 			fc.property(axleArbitrary, real(-70, 70), real(-30, 30), ({ axle, mirror }, rack, travel) => {
-				const [state] = sweepSteer(mirror ? axle.left : axle, { from: rack, to: rack, step: 1, travel }).states;
 				const mine = solveSteer(axle, rack, travel);
+				// A travel that binds is refused as such: a corner of its own says the same.
+				if (SIDES.some((side) => !reaches(axle[side], travel))) {
+					expect(() => sweepSteer(mirror ? axle.left : axle, { from: rack, to: rack, step: 1, travel })).toThrow(
+						KinematicsError
+					);
+					return;
+				}
+				const [state] = sweepSteer(mirror ? axle.left : axle, { from: rack, to: rack, step: 1, travel }).states;
 				if (!state || !mine) return;
 				compared++;
 				expect(state.rack).toBe(rack);
@@ -149,8 +171,8 @@ describe('steer', () => {
 			}),
 			runs(400)
 		);
-		expect(compared).toBeGreaterThan(350);
-		expect(percentages).toBeGreaterThan(250);
+		expect(compared).toBeGreaterThan(300);
+		expect(percentages).toBeGreaterThan(150);
 	});
 
 	it('stops where one side binds', () => {
