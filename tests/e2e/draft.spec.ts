@@ -55,9 +55,9 @@ test('two windows that edit different points: both edits are in both', async ({ 
 	await typeCell(page, 'lower ball joint, out', '650');
 	await untilKept(page);
 
-	const { document } = await build.draft();
-	expect(document.left.points.upperBall).toEqual([-14, 617, 300]);
-	expect(document.left.points.lowerBall).toEqual([8, 650, 65]);
+	const { left } = (await build.draft()).document;
+	expect(left.points.upperBall).toEqual([-14, 617, 300]);
+	expect(left.points.lowerBall).toEqual([8, 650, 65]);
 	await expect(cell(page, 'upper ball joint, up')).toHaveText('300.0');
 	await expect(page.getByText(/changed upper ball joint on/)).toBeVisible();
 	await page.getByRole('button', { name: 'show both' }).click();

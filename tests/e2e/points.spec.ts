@@ -140,9 +140,7 @@ test('geometry that cannot be is named at its point, and the last drawing stays 
 	const alert = sheet.getByRole('alert');
 	await expect(alert).toBeVisible();
 	expect(await alert.getAttribute('aria-label')).toMatch(/ball joint/);
-	await expect(
-		page.getByRole('group', { name: 'Front view' }).locator('g[aria-hidden=true].opacity-80 path').first()
-	).toBeAttached();
+	await expect(page.getByRole('group', { name: 'Front view' }).locator('[data-ghost] path').first()).toBeAttached();
 	await expect(page.getByText('last good')).toBeVisible();
 	expect(await caster.innerText()).toBe(good);
 	expect(good).not.toBe(before);

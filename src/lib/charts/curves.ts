@@ -55,7 +55,19 @@ function drawable(key: FigureKey, value: number, travel: number, { lowLimit, hig
 	return [lowLimit, highLimit].every((limit) => !limit || Math.abs(limit.value - travel) > RUNS_AWAY);
 }
 
-function pointsOf(key: FigureKey, { ride, sweep }: Curved, preferences: Preferences): CurvePoint[] {
+/** Points already read off a sweep, in one choice of units: what lies under a drawing does not change while it is worked on. */
+const READ = new WeakMap<Sweep<CornerState>, WeakMap<Preferences, Map<FigureKey, CurvePoint[]>>>();
+
+function pointsOf(key: FigureKey, curved: Curved, preferences: Preferences): CurvePoint[] {
+	const byChoice = READ.get(curved.sweep) ?? new WeakMap<Preferences, Map<FigureKey, CurvePoint[]>>();
+	const byKey = byChoice.get(preferences) ?? new Map<FigureKey, CurvePoint[]>();
+	READ.set(curved.sweep, byChoice.set(preferences, byKey));
+	const points = byKey.get(key) ?? readPoints(key, curved, preferences);
+	byKey.set(key, points);
+	return points;
+}
+
+function readPoints(key: FigureKey, { ride, sweep }: Curved, preferences: Preferences): CurvePoint[] {
 	const { quantity, read } = OUTPUTS[key];
 	return sweep.states.map((state) => {
 		const value = read(state, ride);
@@ -118,6 +130,25 @@ export function shownValue(
 	return value === null ? null : toDisplay(value, OUTPUTS[key].quantity, preferences);
 }
 
+const WRITERS = new WeakMap<Preferences, Map<Quantity, ChartSpec['format']>>();
+
+/** Writes values of a quantity as a person reads them; one writer for one choice, so that equal specs are equal. */
+function writerOf(quantity: Quantity, preferences: Preferences): ChartSpec['format'] {
+	const byQuantity = WRITERS.get(preferences) ?? new Map<Quantity, ChartSpec['format']>();
+	WRITERS.set(preferences, byQuantity);
+	const minutes = quantity === 'angle' && preferences.angle === 'minutes';
+	const write =
+		byQuantity.get(quantity) ??
+		((shown: number | null, decimals?: number) => {
+			if (shown === null) return NONE;
+			return minutes && decimals === undefined
+				? formatMinutes(shown)
+				: formatNumber(shown, decimals ?? decimalsOf(quantity, preferences), preferences);
+		});
+	byQuantity.set(quantity, write);
+	return write;
+}
+
 /** One figure's chart: the corner in hand first, others under it. `now` is the state at the slide, null where the cursor is told apart. */
 export function curveSpec(
 	key: FigureKey,
@@ -135,7 +166,6 @@ export function curveSpec(
 		limits: { low: limitOf(one.sweep.lowLimit, preferences), high: limitOf(one.sweep.highLimit, preferences) }
 	}));
 	const first = curved[0];
-	const minutes = quantity === 'angle' && preferences.angle === 'minutes';
 	return {
 		key,
 		label: short,
@@ -146,12 +176,7 @@ export function curveSpec(
 			least: toDisplay(LEAST[key] ?? LEAST_OF[quantity] ?? 1, quantity, preferences),
 			include: FROM_ZERO.has(key) ? [0] : []
 		},
-		format: (shown, decimals) => {
-			if (shown === null) return NONE;
-			return minutes && decimals === undefined
-				? formatMinutes(shown)
-				: formatNumber(shown, decimals ?? decimalsOf(quantity, preferences), preferences);
-		},
+		format: writerOf(quantity, preferences),
 		cursorValue: shownValue(key, now, first?.ride ?? null, preferences),
 		...(first && series.every(({ points }) => points.every(({ value }) => value === null))
 			? { why: reasonOf(key, first.ride) ?? 'Nothing to draw over this travel.' }

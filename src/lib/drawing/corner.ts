@@ -4,7 +4,7 @@ import type { MarkKey, Places } from './linkage';
 import { parseTyreSize } from '$lib/domain/tyres';
 import { MM_PER_INCH } from '$lib/units';
 import { entryOf, POINT_ORDER } from '$lib/domain/points';
-import type { CornerState, Vec3 } from '$lib/kinematics';
+import { POINT_NAMES, type CornerState, type Vec3 } from '$lib/kinematics';
 import type { CornerEntry } from '$lib/schemas/axle';
 
 /** The tyre as drawn: its loaded radius, and width and rim by the build's tyre size where that can be read. */
@@ -25,19 +25,28 @@ export function tyreOf(loadedRadius: number | null, size: string): DrawnTyre {
 	};
 }
 
+/** To a ten-thousandth of a mm, and of a unit vector a millionth of that: the last bits of a solved state are no movement. */
+const still = (point: Vec3, parts = 1e4): Vec3 => [
+	Math.round(point[0] * parts) / parts,
+	Math.round(point[1] * parts) / parts,
+	Math.round(point[2] * parts) / parts
+];
+
 /** A solved position of a corner, ready for the drawing. */
 export function drawnState(state: CornerState, tyre: DrawnTyre): DrawnCorner {
-	const places: Places = { ...state.points };
-	if (state.coilover) {
-		places.coiloverTop = state.coilover.top;
-		places.coiloverBottom = state.coilover.bottom;
+	const places: Places = {};
+	const { points, coilover } = state;
+	for (const name of POINT_NAMES) places[name] = still(points[name]);
+	if (coilover) {
+		places.coiloverTop = still(coilover.top);
+		places.coiloverBottom = still(coilover.bottom);
 	}
 	return {
 		places,
 		wheel: {
-			centre: state.wheelCentre,
-			spin: state.spinAxis,
-			contact: state.contactPoint,
+			centre: still(state.wheelCentre),
+			spin: still(state.spinAxis, 1e9),
+			contact: still(state.contactPoint),
 			tyre: tyre.shape,
 			rimRadius: tyre.rimRadius
 		},

@@ -154,7 +154,10 @@ const BREAK_PAST = 9;
  * Break lines across a tyre that a window cuts off at its top or foot, as a draughtsman marks a part that runs on:
  * level lines with one zigzag. Gives their path data and the window left between them; null where nothing is cut.
  */
-export function tyreBreaks(tyre: NonNullable<ViewScene['tyre']>, box: Box): { path: string; top: number; foot: number } | null {
+export function tyreBreaks(
+	tyre: NonNullable<ViewScene['tyre']>,
+	box: Box
+): { path: string; top: number; foot: number } | null {
 	const cutTop = tyre.y1 < box.y;
 	const cutFoot = tyre.y2 > box.y + box.h;
 	if (!cutTop && !cutFoot) return null;

@@ -170,7 +170,9 @@ export class DraftEditor {
 	/** The drag so far, always from where it began: the recipe sets places, it does not add to the last call. */
 	dragTo(recipe: Recipe<AxleDocument>): void {
 		if (!this.#drag) return;
-		this.#show(change(this.#drag.from, recipe).document);
+		const { document } = change(this.#drag.from, recipe);
+		// A pointer that trembles in place is no new edit.
+		if (differences(this.document, document).length > 0) this.#show(document);
 	}
 
 	/** Ends the drag as one undo step. */
@@ -179,7 +181,10 @@ export class DraftEditor {
 		if (!drag) return;
 		this.#drag = null;
 		const done = this.#between(drag.from, this.document);
-		if (done.forward.length > 0) this.#step(drag.label, done);
+		if (done.forward.length === 0) return;
+		// What the drag showed last stands already: its end is a step, not another edit.
+		this.#history.push(drag.label, done);
+		this.#keeper.touch();
 	}
 
 	/** Ends the drag and puts everything back. */

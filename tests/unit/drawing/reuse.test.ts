@@ -29,8 +29,20 @@ it('is the earlier one itself where nothing changed', () => {
 });
 
 it('keeps every part that did not change, and nothing of one that did', () => {
-	const before = { marks: [{ key: 'a', x: 1 }, { key: 'b', x: 2 }], edge: 'M0 0' };
-	const after = { marks: [{ key: 'a', x: 1 }, { key: 'b', x: 3 }], edge: 'M0 0' };
+	const before = {
+		marks: [
+			{ key: 'a', x: 1 },
+			{ key: 'b', x: 2 }
+		],
+		edge: 'M0 0'
+	};
+	const after = {
+		marks: [
+			{ key: 'a', x: 1 },
+			{ key: 'b', x: 3 }
+		],
+		edge: 'M0 0'
+	};
 	const made = reuse(before, after);
 	expect(made.marks[0]).toBe(before.marks[0]);
 	expect(made.marks[1]).not.toBe(before.marks[1]);

@@ -20,7 +20,14 @@ export interface Dimensioned {
  * What the dimensions of the drawing say. Verdicts belong to ride height and are left out elsewhere; so is typing of
  * camber and toe, which are entered at ride height.
  */
-export function dimensionTexts({ state, ride, wheel, rows, preferences, readOnly }: Dimensioned): Partial<Record<DimensionKey, DimensionText>> {
+export function dimensionTexts({
+	state,
+	ride,
+	wheel,
+	rows,
+	preferences,
+	readOnly
+}: Dimensioned): Partial<Record<DimensionKey, DimensionText>> {
 	const atRide = state === ride;
 	const shown = (value: number | null, key: FigureKey) => formatQuantity(value, OUTPUTS[key].quantity, preferences);
 	const figure = (key: FigureKey, typed = false, label = OUTPUTS[key].short): DimensionText | undefined => {

@@ -13,7 +13,14 @@ import { reuse } from '$lib/drawing/reuse';
 import type { DrawnCorner } from '$lib/drawing/scene';
 import { SheetModel } from '$lib/drawing/sheet.svelte';
 import { readTrammel } from '$lib/drawing/trammel';
-import { KinematicsError, solveCorner, sweepBump, type CornerGeometry, type CornerState, type Vec3 } from '$lib/kinematics';
+import {
+	KinematicsError,
+	solveCorner,
+	sweepBump,
+	type CornerGeometry,
+	type CornerState,
+	type Vec3
+} from '$lib/kinematics';
 import type { AxleDocument, CornerEntry, FigureKey } from '$lib/schemas/axle';
 import type { BuildFacts } from '$lib/schemas/build';
 import type { Preferences } from '$lib/schemas/preferences';
@@ -230,7 +237,9 @@ export class PointsModel {
 	/** Marks say name and coordinates, so that a view can be read without seeing it. */
 	#lastNames: Record<MarkKey, string> | undefined;
 	readonly names: Record<MarkKey, string> = $derived.by(() => {
-		const { preferences, build } = this.#source;
+		const { preferences, build, editor } = this.#source;
+		// Nobody hears forty names a second: they follow when the drag ends.
+		if (editor.dragging && this.#lastNames) return this.#lastNames;
 		const names = { ...MARK_NAMES };
 		for (const key of POINT_ORDER) {
 			const place = this.entry(key);
@@ -269,12 +278,27 @@ export class PointsModel {
 	});
 
 	/** The curves; the slide moves over them and leaves them as they are. */
-	readonly curves: ChartSpec[] = $derived(
-		this.plot && this.#curved.length ? CURVES.slice(0, this.plot.count).map((key) => this.#curve(key)) : []
-	);
-	readonly curveLayouts: ChartLayout[] = $derived(
-		this.plot ? layCharts(this.curves, this.plot.left, this.plot.width) : []
-	);
+	#lastCurves: ChartSpec[] | undefined;
+	readonly curves: ChartSpec[] = $derived.by(() => {
+		const count = this.#curved.length ? (this.plot?.count ?? 0) : 0;
+		this.#lastCurves = reuse(
+			this.#lastCurves,
+			CURVES.slice(0, count).map((key) => this.#curve(key))
+		);
+		return this.#lastCurves;
+	});
+	#lastLayouts: ChartLayout[] = [];
+	readonly curveLayouts: ChartLayout[] = $derived.by(() => {
+		const laid = this.plot ? layCharts(this.curves, this.plot.left, this.plot.width) : [];
+		// A layout holds its scale as a function: the same edges and domain are the same layout.
+		this.#lastLayouts = laid.map((one, k) => {
+			const last = this.#lastLayouts[k];
+			const same =
+				last && last.left === one.left && last.right === one.right && String(last.domain) === String(one.domain);
+			return same ? last : one;
+		});
+		return this.#lastLayouts;
+	});
 
 	/** What stands at the cursor of a curve. */
 	cursor(key: string): number | null {
