@@ -189,7 +189,7 @@ test('compare: what moved in the builder’s words, signed differences, verdicts
 	await expect(moved.getByRole('row', { name: /^upper ball joint/ })).toHaveText(/\+3\.0.*–.*\+6\.0.*6\.7/);
 	await expect(moved.getByRole('columnheader', { name: /Δ aft/ })).toBeVisible();
 	await expect(page.getByText('Static camber: 0.00 → −0.75°').first()).toBeVisible();
-	await expect(page.getByText(/The draft is not complete/)).toBeVisible();
+	await expect(page.getByText(/The draft is not complete/).first()).toBeVisible();
 	const figures = page.getByRole('region', { name: 'Figures side by side' });
 	await expect(figures.getByRole('row', { name: /^Camber, °/ })).toContainText('−0.75');
 	const aims = page.getByRole('region', { name: 'Table of targets' });
