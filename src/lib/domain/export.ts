@@ -16,10 +16,10 @@ export interface TravelTable {
 	readonly limits: readonly string[];
 }
 
-/** Significant digits in a file: all that a 64-bit number holds, less the last, which is rounding. */
-const FILE_DIGITS = 15;
+/** Decimals in a file: the arithmetic of a sweep holds no more, and a nought reads as a nought. */
+const FILE_DECIMALS = 12;
 /** What a file says of its own figures. */
-export const FILE_PRECISION = `Figures as computed, to ${FILE_DIGITS} significant digits: geometry, not strength.`;
+export const FILE_PRECISION = `Figures as computed, to ${FILE_DECIMALS} decimals: geometry, not strength.`;
 
 function limitInWords(end: 'droop' | 'bump', limit: SweepLimit | undefined, preferences: Preferences): string[] {
 	if (!limit) return [];
@@ -61,7 +61,7 @@ export function travelTable(
  * at the end.
  */
 export function travelCsv(table: TravelTable, preferences: Preferences, notes: readonly string[] = []): string {
-	const exact = (value: number | null) => (value === null ? null : Number(value.toPrecision(FILE_DIGITS)));
+	const exact = (value: number | null) => (value === null ? null : Number(value.toFixed(FILE_DECIMALS)));
 	const rows: CsvCell[][] = [
 		table.head.map(({ label, unit }) => (unit === '' ? label : `${label}, ${unit}`)),
 		...table.rows.map((row) => row.map(exact)),
