@@ -121,8 +121,8 @@ test('the files: neutralised numbers with units, a drawing of its own, a picture
 	expect(lines[0]).toBe('"Travel, mm","Camber, °","Toe per wheel, °",Motion ratio');
 	expect(lines).toHaveLength(1 + 5 + 4);
 	// The bench corner has no coil-over: an empty cell, never NaN.
-	for (const line of lines.slice(1, 6)) expect(line).toMatch(/^-?\d+,-?\d[\d.e-]*,-?\d[\d.e-]*,$/);
-	expect(lines.at(-1)).toContain('15 significant digits');
+	for (const line of lines.slice(1, 6)) expect(line).toMatch(/^-?\d+(,-?\d+(\.\d+)?){2},$/);
+	expect(lines.at(-1)).toContain('12 decimals');
 
 	const svg = await fileOf(page, 'SVG');
 	const text = svg.bytes.toString('utf8');
