@@ -76,9 +76,10 @@ const NAMED = 3;
 
 /** Why an outcome has no corner, one sentence; null where it has one. `name` begins it: "Revision C". */
 export function whyUnsolved(name: string, { missing, error }: Outcome): string | null {
-	if (error) return `${name} cannot be solved: ${error.message}`;
+	const within = (text: string) => text.charAt(0).toLowerCase() + text.slice(1);
+	if (error) return `${name} cannot be solved: ${within(error.message)}`;
 	if (!missing) return null;
-	const labels = missing.map(({ label }) => label.charAt(0).toLowerCase() + label.slice(1));
+	const labels = missing.map(({ label }) => within(label));
 	const rest = labels.length - NAMED;
 	const told = rest > 0 ? `${labels.slice(0, NAMED).join('; ')} and ${rest} more` : labels.join('; ');
 	return `${name} is not complete: still to be typed are ${told}.`;
