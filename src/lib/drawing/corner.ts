@@ -25,12 +25,14 @@ export function tyreOf(loadedRadius: number | null, size: string): DrawnTyre {
 	};
 }
 
-/** To a ten-thousandth of a mm, and of a unit vector a millionth of that: the last bits of a solved state are no movement. */
-const still = (point: Vec3, parts = 1e4): Vec3 => [
-	Math.round(point[0] * parts) / parts,
-	Math.round(point[1] * parts) / parts,
-	Math.round(point[2] * parts) / parts
-];
+/**
+ * To a ten-thousandth of a mm, and of a unit vector a millionth of that: the last bits of a solved state are no
+ * movement, and neither is a nought with a minus sign.
+ */
+function still(point: Vec3, parts = 1e4): Vec3 {
+	const rounded = (value: number) => Math.round(value * parts) / parts + 0;
+	return [rounded(point[0]), rounded(point[1]), rounded(point[2])];
+}
 
 /** A solved position of a corner, ready for the drawing. */
 export function drawnState(state: CornerState, tyre: DrawnTyre): DrawnCorner {
